@@ -1,0 +1,2 @@
+//! The `duskwater` program; everything it does lives in the library.
+fn main() {}

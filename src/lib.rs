@@ -15,3 +15,13 @@ pub mod species;
 pub mod rates;
 
 pub mod network;
+
+pub mod sparse;
+
+pub mod integrate;
+
+pub mod kinetics;
+
+pub mod cloud;
+
+pub mod analysis;

@@ -1,0 +1,152 @@
+//! The list of every code, with what it means at length.
+//!
+//! A new code is one line here; `tests/codes.rs` checks that every code used
+//! in the sources is listed, once, and that no listed code is unused.
+
+/// Every code and its explanation, in the order in which a reader of the
+/// manual wants them.
+pub const CODES: &[(&str, &str)] = &[
+    (
+        "species-formula",
+        "A species name or composition does not follow the grammar: elements with counts, \
+         then `+` or `-` for charge, then `(ice)` for ice. `e-` is the electron and \
+         `grain` is dust.",
+    ),
+    (
+        "species-unknown-element",
+        "A name holds an element that has no atomic weight here (H to Zn and D have). \
+         Correct it, or give the composition in its own column, where elements may be \
+         made up.",
+    ),
+    (
+        "network-missing-file",
+        "A network folder holds network.toml, species.csv, reactions.csv and sources.csv; \
+         one is missing. With a `base`, only network.toml is needed.",
+    ),
+    ("network-encoding", "A file is not UTF-8 text."),
+    ("network-empty-file", "A table has not even a header line."),
+    (
+        "network-header",
+        "The first line of a table lacks a column, or has one that is unknown or stands \
+         twice.",
+    ),
+    (
+        "network-fields",
+        "A line has more or fewer cells than the header. Most often a cell with a comma \
+         is not in quotes.",
+    ),
+    (
+        "network-quote",
+        "A quoted cell is not closed, or text follows its closing quote.",
+    ),
+    (
+        "network-toml",
+        "network.toml does not follow the TOML grammar.",
+    ),
+    (
+        "network-key",
+        "network.toml has an unknown key, a value of the wrong type, no title, or picks \
+         from a base without naming one.",
+    ),
+    (
+        "network-base",
+        "The network named by `base` was not found, or networks build on one another in a \
+         circle.",
+    ),
+    (
+        "network-unknown-id",
+        "network.toml picks a reaction that its base does not have.",
+    ),
+    (
+        "network-elements",
+        "The `elements` of network.toml are not the elements of its species.",
+    ),
+    (
+        "network-source-row",
+        "A line of sources.csv lacks its key or citation.",
+    ),
+    (
+        "network-duplicate-source",
+        "Two lines of sources.csv have one key and different citations.",
+    ),
+    (
+        "network-unknown-source",
+        "A row names a source that sources.csv does not list.",
+    ),
+    ("network-duplicate-species", "A species is listed twice."),
+    (
+        "network-unknown-species",
+        "A species is used that species.csv does not list.",
+    ),
+    ("network-id", "A row has no id, or its id holds blanks."),
+    (
+        "network-duplicate-id",
+        "One id stands for rows of different reactions. Rows of one reaction may share an \
+         id.",
+    ),
+    (
+        "network-equation",
+        "An equation cannot be read. Species stand between ` + ` and ` -> `, with an \
+         optional count before a name.",
+    ),
+    (
+        "network-number",
+        "A cell that wants a finite number holds something else.",
+    ),
+    ("network-negative", "A number that cannot be negative is."),
+    (
+        "network-range",
+        "The temperature range of a row is empty or reaches 0 K.",
+    ),
+    (
+        "network-uncertainty",
+        "The uncertainty is a factor F either way and at least 1.",
+    ),
+    ("network-law", "The law of a row is unknown."),
+    (
+        "network-law-not-built",
+        "The law of a row is reserved for gas-ice exchange, which is not built yet.",
+    ),
+    (
+        "network-law-shape",
+        "The law does not fit the reactants: `capture` wants an ion and a neutral, \
+         photoprocesses one reactant, and so on.",
+    ),
+    (
+        "network-missing-data",
+        "A law needs a datum of a species (a mass, a polarizability) that is not given.",
+    ),
+    (
+        "network-dust-ion",
+        "The effective recombination on dust has constants for H+, He+, C+, Na+, Mg+, \
+         Si+, S+ and Fe+ only.",
+    ),
+    (
+        "network-unused-number",
+        "A row gives a number that its law does not use.",
+    ),
+    ("network-atoms", "An equation does not keep its atoms."),
+    ("network-charge", "An equation does not keep its charge."),
+    (
+        "network-overlap",
+        "Two rows of one reaction cover the same temperatures, so that the coefficient is \
+         not defined. Ranges may touch; at the shared edge the upper row holds.",
+    ),
+    (
+        "network-mixed-dust",
+        "Ions recombine both on explicit grains and by the effective form. That counts \
+         the same dust twice.",
+    ),
+    (
+        "network-coefficient",
+        "A coefficient is negative or not a finite number under the given conditions.",
+    ),
+];
+
+/// The explanation of a code, or none when the code is not ours.
+pub fn explain(code: &str) -> Option<&'static str> {
+    CODES
+        .iter()
+        .find(|(name, _)| *name == code)
+        .map(|(_, text)| *text)
+}

@@ -151,7 +151,7 @@ pub(super) fn redistributed(network: &Network, start: &[f64], wanted: &[&str]) -
     let surplus = charge(&out) - charge(start);
     if surplus > 0.0 {
         out[network.species_index("e-")?] += surplus;
-    } else if surplus < -1e-30 {
+    } else if surplus < -1e-12 {
         return None;
     }
     left.iter().all(|&left| left <= 1e-12).then_some(out)

@@ -43,7 +43,10 @@ pub fn slowest_mode<L: Lane, S: System>(
     let lanes: Vec<L> = parameters.iter().map(|&p| L::splat(p)).collect();
     let (matrix, _) = jacobian::<L, S>(system, &lanes, state);
     let carriers = carriers(system, state, floor);
-    let free: Vec<usize> = (0..state.len()).filter(|i| !carriers.contains(i)).collect();
+    // Unknowns that nothing changes are no modes.
+    let inert = |i: usize| matrix.row(i).amax() <= 0.0;
+    let free: Vec<usize> =
+        (0..state.len()).filter(|i| !carriers.contains(i) && !inert(*i)).collect();
     let invariants = system.invariants();
     let m = carriers.len();
     let mut of_carriers = DMatrix::zeros(m, m);

@@ -218,6 +218,9 @@ fn increment<L: Lane, S: System>(
         if largest > 0.0 {
             matrix.row_mut(i).scale_mut(1.0 / largest);
             right[i] /= largest;
+        } else {
+            // Nothing changes this unknown: it stays.
+            matrix[(i, i)] = 1.0;
         }
     }
     let mut d = matrix.lu().solve(&right)?;

@@ -2,7 +2,7 @@
 
 use super::model::Model;
 use crate::diagnostic::{Finding, Place};
-use crate::integrate::{Failure, Problem, Solution, Work, integrate_all};
+use crate::integrate::{Failure, Options, Problem, Solution, Work, integrate_all};
 use crate::network::Network;
 use crate::sparse::{Fused, Separate, Single, has_fused_arithmetic};
 use crate::units::YEAR_S;
@@ -57,12 +57,8 @@ impl Model {
     /// Evolves the cloud from its start to the given times (years, ascending).
     #[must_use]
     pub fn evolve_to(&self, times_yr: &[f64]) -> Evolution {
-        let problem = Problem {
-            parameters: self.parameters(),
-            start: self.kinetics.to_unknowns(&self.start),
-            times: times_yr.iter().map(|t| t * YEAR_S).collect(),
-        };
-        let solution = self.integrate(problem);
+        let solution =
+            self.integrate_from(&self.start, times_yr, self.run.solver.relative_tolerance);
         let points: Vec<TimePoint> = solution
             .states
             .iter()
@@ -81,9 +77,25 @@ impl Model {
         }
     }
 
-    fn integrate(&self, problem: Problem) -> Solution {
+    /// Integrates from the given abundances (by species) to the given times.
+    pub(super) fn integrate_from(
+        &self,
+        start: &[f64],
+        times_yr: &[f64],
+        relative_tolerance: f64,
+    ) -> Solution {
+        let problem = Problem {
+            parameters: self.parameters(),
+            start: self.kinetics.to_unknowns(start),
+            times: times_yr.iter().map(|t| t * YEAR_S).collect(),
+        };
+        let options = Options {
+            relative_tolerance,
+            absolute_tolerance: self.run.solver.absolute_tolerance,
+            ..Options::default()
+        };
         let mut solution = None;
-        let (kinetics, options) = (&*self.kinetics, self.options());
+        let kinetics = &*self.kinetics;
         let keep = |s| solution = Some(s);
         if has_fused_arithmetic() {
             integrate_all::<Single<Fused>, _>(kinetics, &options, [problem], keep);

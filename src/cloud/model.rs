@@ -5,7 +5,6 @@ use std::sync::Arc;
 use super::runfile::{RunFile, unknown_species};
 use super::start;
 use crate::diagnostic::Finding;
-use crate::integrate::Options;
 use crate::kinetics::{Kinetics, Mechanism};
 use crate::network::Network;
 
@@ -69,15 +68,6 @@ impl Model {
     /// The terms' coefficients for the engine.
     pub(super) fn parameters(&self) -> Vec<f64> {
         self.kinetics.parameters(&self.coefficients, self.run.conditions.hydrogen_density)
-    }
-
-    /// Options of the integrator.
-    pub(super) fn options(&self) -> Options {
-        Options {
-            relative_tolerance: self.run.solver.relative_tolerance,
-            absolute_tolerance: self.run.solver.absolute_tolerance,
-            ..Options::default()
-        }
     }
 
     /// Events per cm3 and second of every reaction at the given abundances

@@ -53,6 +53,11 @@ const ATOMIC: &[&str] = &["C+", "S+", "Si+", "Mg+", "Fe+", "Na+", "H"];
 /// Relative difference in a species above 1e-15 that makes two states two.
 const DISTINCT: f64 = 1e-3;
 
+/// How long a cloud is followed before the search starts again, years, and the
+/// relative tolerance of that.
+const LONG_YR: f64 = 1e9;
+const LOOSE: f64 = 1e-3;
+
 impl Model {
     /// Looks for the steady states of the cloud: from the run's own start, from
     /// molecules, and from ions with hydrogen molecular or atomic, since such
@@ -77,14 +82,34 @@ impl Model {
         report
     }
 
+    /// The steady state that a start leads to: by pseudo-transient continuation
+    /// at once or, where that gets stuck, after following the cloud in time.
     fn settle(&self, start: &[f64]) -> Result<SteadyState, SteadyFailure> {
+        let options = SteadyOptions::default();
+        self.search(&options, start).or_else(|failure| {
+            let later = self.integrate_from(start, &[LONG_YR], LOOSE);
+            match later.states.last() {
+                Some(state) => {
+                    let options = SteadyOptions { first_step: LONG_YR * YEAR_S, ..options };
+                    self.search(&options, &self.kinetics.to_species(state))
+                }
+                None => Err(failure),
+            }
+        })
+    }
+
+    fn search(
+        &self,
+        options: &SteadyOptions,
+        start: &[f64],
+    ) -> Result<SteadyState, SteadyFailure> {
         let parameters = self.parameters();
         let start = self.kinetics.to_unknowns(start);
-        let (kinetics, options) = (&*self.kinetics, SteadyOptions::default());
+        let kinetics = &*self.kinetics;
         if has_fused_arithmetic() {
-            find_steady_state::<Single<Fused>, _>(kinetics, &options, &parameters, &start)
+            find_steady_state::<Single<Fused>, _>(kinetics, options, &parameters, &start)
         } else {
-            find_steady_state::<Single<Separate>, _>(kinetics, &options, &parameters, &start)
+            find_steady_state::<Single<Separate>, _>(kinetics, options, &parameters, &start)
         }
     }
 

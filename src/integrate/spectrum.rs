@@ -79,7 +79,11 @@ pub fn slowest_mode<L: Lane, S: System>(
 
 /// The eigenvalues that rounding leaves accurate to a few digits.
 fn trusted(matrix: &DMatrix<f64>) -> Option<Vec<Complex<f64>>> {
-    let schur = Schur::try_new(balanced(matrix), 1e-14, 10_000)?;
+    let matrix = balanced(matrix);
+    // Strongly graded matrices may need a looser test for convergence.
+    let schur = [1e-15, 1e-14, 1e-13, 1e-12]
+        .into_iter()
+        .find_map(|precision| Schur::try_new(matrix.clone(), precision, 10_000))?;
     let values = schur.complex_eigenvalues();
     let largest = values.iter().map(|v| v.norm()).fold(0.0, f64::max);
     Some(values.iter().copied().filter(|v| v.norm() > 1e-9 * largest).collect())

@@ -28,7 +28,7 @@ pub struct SteadyOptions {
 
 impl Default for SteadyOptions {
     fn default() -> Self {
-        Self { tolerance: 1e-9, floor: 1e-28, step_limit: 2000, first_step: 1e3 }
+        Self { tolerance: 1e-9, floor: 1e-28, step_limit: 500, first_step: 1e3 }
     }
 }
 

@@ -134,7 +134,7 @@ impl Conditions {
                 1e12,
             ),
             ("temperature", self.temperature, "K", 1.0, 1e5),
-            ("dust_temperature", self.dust_temperature, "K", 1.0, 3e3),
+            ("dust_temperature", self.dust_temperature, "K", 1.0, 1e5),
             (
                 "cosmic_ray_ionization_rate",
                 self.cosmic_ray_ionization_rate,

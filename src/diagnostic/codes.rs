@@ -141,6 +141,89 @@ pub const CODES: &[(&str, &str)] = &[
         "network-coefficient",
         "A coefficient is negative or not a finite number under the given conditions.",
     ),
+    (
+        "audit-made-up-element",
+        "A species holds an element without an atomic weight. That is fine in a test \
+         network; its mass is not known.",
+    ),
+    (
+        "audit-twins",
+        "Two species have the same atoms, charge and enthalpy: perhaps one species under \
+         two names.",
+    ),
+    (
+        "audit-no-enthalpy",
+        "Species without a formation enthalpy: reactions with them cannot be judged for \
+         energy or detailed balance.",
+    ),
+    (
+        "audit-no-dipole",
+        "The capture law is used for a neutral whose dipole is not given and counts as 0. \
+         For a polar molecule that is far too slow when cold.",
+    ),
+    ("audit-no-change", "Both sides of an equation are the same."),
+    (
+        "audit-range",
+        "Rows do not cover 5 to 3000 K. Outside, the nearest row is held at its nearest \
+         edge; the message says how far that is from its formula continued.",
+    ),
+    (
+        "audit-seam",
+        "The coefficient jumps where two rows meet, by more than a factor 1.5.",
+    ),
+    (
+        "audit-too-fast",
+        "A coefficient is larger than any collision of that kind: 1e-5 cm3 s-1 for two \
+         bodies with an electron, 1e-6 with an ion, 3e-9 for neutrals, 1e-25 cm6 s-1 for \
+         three bodies.",
+    ),
+    (
+        "audit-continuation",
+        "A formula gives impossible values when continued outside its range, most often \
+         because gamma is negative. Harmless as long as the edge is held.",
+    ),
+    (
+        "audit-beyond-capture",
+        "The channels of an ion and a neutral together exceed the rate at which the two \
+         meet.",
+    ),
+    (
+        "audit-uphill",
+        "A reaction takes energy by the enthalpies of its species, yet its coefficient is \
+         large where it is cold.",
+    ),
+    (
+        "audit-low-barrier",
+        "The barrier of an endothermic reaction is much smaller than the energy it takes.",
+    ),
+    (
+        "audit-ion-barrier",
+        "A strongly exothermic reaction of an ion has a barrier, which is rare.",
+    ),
+    (
+        "audit-neutral-barrier",
+        "Exothermic reactions of neutrals that have a barrier; this is common.",
+    ),
+    (
+        "audit-detailed-balance",
+        "A reaction and its reverse are farther from detailed balance than a stated \
+         factor at 300 or 1000 K.",
+    ),
+    ("audit-never-used", "A species takes part in no reaction."),
+    (
+        "audit-never-made",
+        "Nothing makes a species at 10 K: it keeps at most its start abundance.",
+    ),
+    (
+        "audit-never-destroyed",
+        "Nothing destroys a species at 10 K: it piles up.",
+    ),
+    ("audit-no-source", "Rows without a source."),
+    (
+        "audit-provenance",
+        "Numbers that were not seen in their source: remembered, estimated or derived.",
+    ),
+    ("audit-unused-source", "Sources that nothing cites."),
 ];
 
 /// The explanation of a code, or none when the code is not ours.

@@ -165,7 +165,7 @@ fn check_row(
 }
 
 /// Rows of one reaction may touch, not overlap.
-fn check_overlap(reaction: &Reaction, findings: &mut Vec<Finding>) {
+pub(super) fn check_overlap(reaction: &Reaction, findings: &mut Vec<Finding>) {
     for pair in reaction.rows.windows(2) {
         if pair[0].t_max > pair[1].t_min {
             let message = format!(
@@ -186,7 +186,11 @@ fn check_overlap(reaction: &Reaction, findings: &mut Vec<Finding>) {
 }
 
 /// A network uses explicit grains or the effective form, never both.
-fn check_dust_schemes(reactions: &[Reaction], species: &[Species], findings: &mut Vec<Finding>) {
+pub(super) fn check_dust_schemes(
+    reactions: &[Reaction],
+    species: &[Species],
+    findings: &mut Vec<Finding>,
+) {
     let on_dust = |reaction: &&Reaction| reaction.law() == Law::DustRecombination;
     let explicit = |reaction: &&Reaction| reaction.reactants.iter().any(|i| species[*i].is_grain());
     let with_grains = reactions.iter().filter(on_dust).find(explicit);

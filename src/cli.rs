@@ -9,12 +9,16 @@ mod findings;
 mod load;
 mod output;
 
+mod channel_text;
 mod channels;
 mod check;
 mod evolve;
 mod explain;
+mod figures;
+mod header;
 mod rates;
 mod shipped;
+mod species;
 mod steady;
 
 use std::ffi::OsString;

@@ -3,7 +3,7 @@
 use super::output::Output;
 use crate::analysis::channels::{Channel, Channels, Role, rank};
 use crate::cloud::Model;
-use crate::report::text::{ChannelLine, Layout, account};
+use crate::report::text::{ChannelLine, Layout, account, scientific};
 
 /// What an account shows.
 pub(super) struct Options {
@@ -29,12 +29,7 @@ pub(super) fn summary(
 }
 
 /// A full account with coefficients, uncertainty factors and sources.
-pub(super) fn full(
-    model: &Model,
-    ranked: &Channels,
-    options: &Options,
-    output: &Output,
-) -> String {
+pub(super) fn full(model: &Model, ranked: &Channels, options: &Options, output: &Output) -> String {
     both(model, ranked, options, output, true)
 }
 
@@ -73,7 +68,7 @@ fn both(
         let heading = if of_role.is_empty() {
             format!("{name} is not {verb}")
         } else {
-            format!("{name} is {verb}: {total:.2e} {} in all{kind}", options.unit)
+            format!("{name} is {verb}: {} {} in all{kind}", scientific(total, 2), options.unit)
         };
         let lines: Vec<ChannelLine> = of_role
             .iter()
@@ -99,8 +94,8 @@ fn line(model: &Model, channel: &Channel, net: bool) -> ChannelLine {
         equation: format!("{}{law}", reaction.equation),
         share: if net { channel.net_share } else { channel.share },
         detail: format!(
-            "k {:.2e} {}, F {}, {source}",
-            model.coefficients[channel.reaction],
+            "k {} {}, F {}, {source}",
+            scientific(model.coefficients[channel.reaction], 2),
             network.coefficient_unit(reaction),
             row.uncertainty,
         ),

@@ -87,7 +87,12 @@ fn page(network: &Network, output: &mut Output) -> Result<(), Stop> {
         histogram(title, counts, total, output)?;
     }
     let most: Vec<Count> = s.sources.iter().take(6).cloned().collect();
-    histogram(&format!("most used of {} sources, in rows", s.sources.len()), &most, s.rows, output)?;
+    histogram(
+        &format!("most used of {} sources, in rows", s.sources.len()),
+        &most,
+        s.rows,
+        output,
+    )?;
     if output.verbose {
         let names: Vec<&str> = network.species.iter().map(|s| s.name.as_str()).collect();
         output.text(&format!("\n  species by name\n{}\n", wrap(&names.join(" "), width - 4, 4)))?;
@@ -95,18 +100,16 @@ fn page(network: &Network, output: &mut Output) -> Result<(), Stop> {
     Ok(())
 }
 
-fn histogram(
-    title: &str,
-    counts: &[Count],
-    total: usize,
-    output: &mut Output,
-) -> Result<(), Stop> {
+fn histogram(title: &str, counts: &[Count], total: usize, output: &mut Output) -> Result<(), Stop> {
     let longest = counts.iter().map(|c| c.what.chars().count()).max().unwrap_or(0);
     output.text(&format!("\n  {title}\n"))?;
     for count in counts {
         let share = count.count as f64 / total.max(1) as f64;
         let bar = bar(share, 20, output.symbols());
-        output.text(&format!("    {:<longest$} {:>5} {bar}\n", count.what, count.count).replace(" \n", "\n"))?;
+        output.text(
+            &format!("    {:<longest$} {:>5} {bar}\n", count.what, count.count)
+                .replace(" \n", "\n"),
+        )?;
     }
     Ok(())
 }
@@ -139,7 +142,10 @@ fn account(findings: &[Finding], all: bool, output: &mut Output) -> Result<(), S
             output.text(&format!("    - {}\n", text.trim_start()))?;
         }
         if of_code.len() > shown {
-            output.text(&format!("      ... and {} more (--verbose shows all)\n", of_code.len() - shown))?;
+            output.text(&format!(
+                "      ... and {} more (--verbose shows all)\n",
+                of_code.len() - shown
+            ))?;
         }
     }
     Ok(())

@@ -6,8 +6,9 @@ use super::arguments::EvolveArguments;
 use super::exit::{Exit, Outcome, Stop};
 use super::output::Output;
 use super::{channel_text, figures, header, load, species};
-use crate::cloud::{Evolution, Model};
+use crate::cloud::{Evolution, Model, TimePoint};
 use crate::report::table::{Cell, Column, Table};
+use crate::report::text::scientific;
 
 /// Channels per role in the summary.
 const TOP: usize = 3;
@@ -64,7 +65,14 @@ fn people(
     output: &mut Output,
 ) -> Result<(), Stop> {
     output.text(&format!("{}\n\nAbundances n(X)/n_H\n", header::of(model)))?;
-    output.table(&wide_table(model, evolution, shown))?;
+    // As many times side by side as the width holds.
+    let per_block = (output.width().saturating_sub(14) / 9).max(1);
+    for (number, points) in evolution.points.chunks(per_block).enumerate() {
+        if number > 0 {
+            output.text("\n")?;
+        }
+        output.table(&wide_table(model, points, shown))?;
+    }
     if let Some(last) = evolution.points.last().filter(|p| p.time_yr > 0.0) {
         let rates = model.reaction_rates(&last.abundances);
         output.text(&format!("\nChannels at {}\n", header::time(last.time_yr)))?;
@@ -83,13 +91,13 @@ fn people(
     ))
 }
 
-fn wide_table(model: &Model, evolution: &Evolution, shown: &[usize]) -> Table {
+fn wide_table(model: &Model, points: &[TimePoint], shown: &[usize]) -> Table {
     let mut columns = vec![Column::with_unit("time", "yr")];
     columns.extend(shown.iter().map(|&s| Column::new(&model.network.species[s].name)));
     let mut table = Table::new(columns);
-    for point in &evolution.points {
+    for point in points {
         let mut cells = vec![Cell::text(header::number(point.time_yr))];
-        cells.extend(shown.iter().map(|&s| Cell::text(format!("{:.2e}", point.abundances[s]))));
+        cells.extend(shown.iter().map(|&s| Cell::text(scientific(point.abundances[s], 2))));
         table.push(cells);
     }
     table.transposed()

@@ -65,7 +65,8 @@ impl Output {
         let locale = ["LC_ALL", "LC_CTYPE", "LANG"]
             .iter()
             .find_map(|name| std::env::var(name).ok().filter(|value| !value.is_empty()));
-        let utf8 = locale.is_some_and(|value| value.to_lowercase().replace('-', "").contains("utf8"));
+        let utf8 =
+            locale.is_some_and(|value| value.to_lowercase().replace('-', "").contains("utf8"));
         !plain && utf8 && io::stdout().is_terminal()
     }
 

@@ -20,7 +20,14 @@ pub(super) fn indices(network: &Network, names: &[String]) -> Result<Vec<usize>,
             None => {
                 let known = network.species.iter().map(|s| s.name.as_str());
                 let remedy = nearest(name, known).map_or_else(
-                    || format!("network `{}` has {} species; `duskwater check {}` lists them", network.name, network.species.len(), network.name),
+                    || {
+                        format!(
+                            "network `{}` has {} species; `duskwater check {}` lists them",
+                            network.name,
+                            network.species.len(),
+                            network.name
+                        )
+                    },
                     |near| format!("did you mean `{near}`?"),
                 );
                 findings.push(

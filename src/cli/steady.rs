@@ -6,6 +6,7 @@ use super::output::Output;
 use super::{channel_text, header, load, species};
 use crate::cloud::{Model, SteadyReport, SteadyStateFound};
 use crate::report::table::{Cell, Column, Table};
+use crate::report::text::scientific;
 
 /// Channels per role in the summary.
 const TOP: usize = 3;
@@ -67,9 +68,8 @@ fn people(
     let mut table = Table::new(columns);
     for &species in shown {
         let mut cells = vec![Cell::text(&model.network.species[species].name)];
-        cells.extend(
-            report.states.iter().map(|s| Cell::text(format!("{:.2e}", s.abundances[species]))),
-        );
+        cells
+            .extend(report.states.iter().map(|s| Cell::text(scientific(s.abundances[species], 2))));
         table.push(cells);
     }
     output.table(&table)?;
@@ -91,10 +91,12 @@ fn describe(state: &SteadyStateFound) -> String {
         (Some(false), Some(time)) => format!("unstable; disturbances grow by e in {time:.1e} yr"),
         _ => "its stability could not be computed".to_owned(),
     };
-    let period = state.period_yr.map_or_else(String::new, |p| format!(", swinging with a period of {p:.1e} yr"));
+    let period = state
+        .period_yr
+        .map_or_else(String::new, |p| format!(", swinging with a period of {p:.1e} yr"));
     let kept = state.conservation.iter().map(|c| c.residual).fold(1e-16, f64::max);
     format!(
-        "{stability}{period}\n  reached from {}; gross rates balance to {:.0e}, elements and charge kept to {kept:.0e}",
+        "{stability}{period}\n  reached from {}\n  gross rates balance to {:.0e}, elements and charge kept to {kept:.0e}",
         state.from.join(", "),
         state.imbalance.max(1e-16),
     )

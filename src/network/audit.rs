@@ -85,26 +85,18 @@ pub fn audit(network: &Network, options: &AuditOptions) -> Vec<Finding> {
 /// [`Conditions::default`] at another temperature, dust being as warm as the
 /// gas up to 100 K.
 fn conditions_at(temperature: f64) -> Conditions {
-    Conditions {
-        temperature,
-        dust_temperature: temperature.min(100.0),
-        ..Conditions::default()
-    }
+    Conditions { temperature, dust_temperature: temperature.min(100.0), ..Conditions::default() }
 }
 
 /// The coefficient at a temperature (K), held at edges; none when it cannot be
 /// computed, which other checks report.
 fn held(network: &Network, reaction: &Reaction, temperature: f64) -> Option<f64> {
-    network
-        .coefficient(reaction, &conditions_at(temperature), Extrapolate::Hold)
-        .ok()
+    network.coefficient(reaction, &conditions_at(temperature), Extrapolate::Hold).ok()
 }
 
 /// The coefficient of one row at a temperature (K), whatever its range.
 fn of_row(network: &Network, reaction: &Reaction, row: &Row, temperature: f64) -> Option<f64> {
-    network
-        .row_coefficient(reaction, row, &conditions_at(temperature), temperature)
-        .ok()
+    network.row_coefficient(reaction, row, &conditions_at(temperature), temperature).ok()
 }
 
 /// Temperatures from `low` to `high`, evenly spaced in the logarithm.
@@ -120,10 +112,7 @@ fn place_of(reaction: &Reaction) -> Place {
 
 /// A file of the network beside the one that holds its rows.
 fn file_beside(network: &Network, file: &str) -> Place {
-    let rows = network
-        .reactions
-        .first()
-        .map_or("", |r| r.rows[0].place.file.as_str());
+    let rows = network.reactions.first().map_or("", |r| r.rows[0].place.file.as_str());
     match rows.rsplit_once('/') {
         Some((folder, _)) => Place::file(format!("{folder}/{file}")),
         None => Place::file(file),

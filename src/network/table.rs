@@ -25,18 +25,12 @@ pub(super) struct Column {
 
 /// Shorthand for a column that must be there.
 pub(super) const fn needed(name: &'static str) -> Column {
-    Column {
-        name,
-        required: true,
-    }
+    Column { name, required: true }
 }
 
 /// Shorthand for a column that may be left out.
 pub(super) const fn optional(name: &'static str) -> Column {
-    Column {
-        name,
-        required: false,
-    }
+    Column { name, required: false }
 }
 
 /// A table: its file and its records, looked up by column name.
@@ -79,43 +73,26 @@ impl Table {
                 continue;
             }
             let place = Place::new(file, record[0].line, record[0].column);
-            let message = format!(
-                "{} cells where the header has {}",
-                record.len(),
-                header.len()
-            );
+            let message = format!("{} cells where the header has {}", record.len(), header.len());
             findings.push(
                 Finding::error("network-fields", place, message)
                     .remedy("put a cell that holds a comma in quotes, or add what is missing"),
             );
         }
-        Some(Self {
-            file: file.to_string(),
-            columns: positions,
-            records: kept,
-        })
+        Some(Self { file: file.to_string(), columns: positions, records: kept })
     }
 
     /// The records, in order.
     pub(super) fn records(&self) -> impl Iterator<Item = Record<'_>> {
-        self.records
-            .iter()
-            .map(|cells| Record { table: self, cells })
+        self.records.iter().map(|cells| Record { table: self, cells })
     }
 }
 
 impl<'a> Record<'a> {
     /// The cell of a column; an empty one when the table lacks the column.
     pub(super) fn cell(&self, column: &str) -> &'a Cell {
-        static EMPTY: Cell = Cell {
-            text: String::new(),
-            line: 0,
-            column: 0,
-        };
-        self.table
-            .columns
-            .get(column)
-            .map_or(&EMPTY, |at| &self.cells[*at])
+        static EMPTY: Cell = Cell { text: String::new(), line: 0, column: 0 };
+        self.table.columns.get(column).map_or(&EMPTY, |at| &self.cells[*at])
     }
 
     /// The text of a column.
@@ -152,11 +129,7 @@ fn read_header(
             };
             wrong(place, format!("there is no column `{text}`"), remedy);
         } else if positions.insert(text.clone(), at).is_some() {
-            wrong(
-                place,
-                format!("column `{text}` stands twice"),
-                "leave one out".to_string(),
-            );
+            wrong(place, format!("column `{text}` stands twice"), "leave one out".to_string());
         }
     }
     let missing: Vec<&str> = columns
@@ -168,21 +141,14 @@ fn read_header(
         return Some(positions);
     }
     let message = format!("the header lacks {}", missing.join(", "));
-    let remedy = format!(
-        "the first line is `{}`",
-        names().collect::<Vec<_>>().join(",")
-    );
+    let remedy = format!("the first line is `{}`", names().collect::<Vec<_>>().join(","));
     wrong(Place::new(file, header[0].line, 1), message, remedy);
     None
 }
 
 /// Cells of all records that are not empty lines.
 fn split(file: &str, text: &str, findings: &mut Vec<Finding>) -> Vec<Vec<Cell>> {
-    let mut reader = Reader {
-        letters: text.chars().peekable(),
-        line: 1,
-        column: 1,
-    };
+    let mut reader = Reader { letters: text.chars().peekable(), line: 1, column: 1 };
     let mut records = Vec::new();
     while reader.letters.peek().is_some() {
         let record = reader.record(file, findings);
@@ -247,14 +213,7 @@ impl Reader<'_> {
                 Some(letter) => text.push(letter),
             }
         };
-        (
-            Cell {
-                text: text.trim_end().to_string(),
-                line,
-                column,
-            },
-            more,
-        )
+        (Cell { text: text.trim_end().to_string(), line, column }, more)
     }
 
     fn quoted(&mut self, file: &str, findings: &mut Vec<Finding>) -> (Cell, bool) {
@@ -292,19 +251,9 @@ impl Reader<'_> {
             }
         };
         if !after.trim().is_empty() {
-            quote(
-                "text follows the closing quote of this cell",
-                "double quotes inside quotes",
-            );
+            quote("text follows the closing quote of this cell", "double quotes inside quotes");
         }
-        (
-            Cell {
-                text: text.trim_end().to_string(),
-                line,
-                column,
-            },
-            more,
-        )
+        (Cell { text: text.trim_end().to_string(), line, column }, more)
     }
 }
 

@@ -50,22 +50,9 @@ pub struct ConditionProblem {
 
 impl std::fmt::Display for ConditionProblem {
     fn fmt(&self, f: &mut std::fmt::Formatter<'_>) -> std::fmt::Result {
-        let Self {
-            key,
-            value,
-            low,
-            high,
-            unit,
-        } = self;
-        let unit = if *unit == "1" {
-            String::new()
-        } else {
-            format!(" {unit}")
-        };
-        write!(
-            f,
-            "{key} = {value:?}{unit} is outside {low:?} to {high:?}{unit}"
-        )
+        let Self { key, value, low, high, unit } = self;
+        let unit = if *unit == "1" { String::new() } else { format!(" {unit}") };
+        write!(f, "{key} = {value:?}{unit} is outside {low:?} to {high:?}{unit}")
     }
 }
 
@@ -126,22 +113,10 @@ impl Conditions {
     /// accepted so that limits can be explored.
     pub fn listed(&self) -> [(&'static str, f64, &'static str, f64, f64); 14] {
         [
-            (
-                "hydrogen_density",
-                self.hydrogen_density,
-                "cm-3",
-                1e-3,
-                1e12,
-            ),
+            ("hydrogen_density", self.hydrogen_density, "cm-3", 1e-3, 1e12),
             ("temperature", self.temperature, "K", 1.0, 1e5),
             ("dust_temperature", self.dust_temperature, "K", 1.0, 1e5),
-            (
-                "cosmic_ray_ionization_rate",
-                self.cosmic_ray_ionization_rate,
-                "s-1",
-                0.0,
-                1e-10,
-            ),
+            ("cosmic_ray_ionization_rate", self.cosmic_ray_ionization_rate, "s-1", 0.0, 1e-10),
             ("visual_extinction", self.visual_extinction, "mag", 0.0, 1e3),
             ("radiation_field", self.radiation_field, "1", 0.0, 1e8),
             ("dust_albedo", self.dust_albedo, "1", 0.0, 0.99),
@@ -151,13 +126,7 @@ impl Conditions {
             ("n2_column", self.n2_column, "cm-2", 0.0, 1e24),
             ("doppler_width", self.doppler_width, "km s-1", 0.01, 100.0),
             ("grain_radius", self.grain_radius, "um", 1e-3, 10.0),
-            (
-                "reference_electron_abundance",
-                self.reference_electron_abundance,
-                "1",
-                1e-15,
-                2.0,
-            ),
+            ("reference_electron_abundance", self.reference_electron_abundance, "1", 1e-15, 2.0),
         ]
     }
 
@@ -166,13 +135,7 @@ impl Conditions {
         self.listed()
             .into_iter()
             .filter(|(_, value, _, low, high)| !(low <= value && value <= high))
-            .map(|(key, value, unit, low, high)| ConditionProblem {
-                key,
-                value,
-                low,
-                high,
-                unit,
-            })
+            .map(|(key, value, unit, low, high)| ConditionProblem { key, value, low, high, unit })
             .collect()
     }
 }

@@ -23,7 +23,11 @@ impl Column {
     }
 
     fn heading(&self) -> String {
-        if self.unit.is_empty() { self.name.clone() } else { format!("{} ({})", self.name, self.unit) }
+        if self.unit.is_empty() {
+            self.name.clone()
+        } else {
+            format!("{} ({})", self.name, self.unit)
+        }
     }
 }
 
@@ -89,14 +93,18 @@ pub fn exact(value: f64) -> String {
         return String::new();
     }
     let size = value.abs();
-    if size > 0.0 && !(1e-4..1e7).contains(&size) { format!("{value:e}") } else { format!("{value}") }
+    if size > 0.0 && !(1e-4..1e7).contains(&size) {
+        format!("{value:e}")
+    } else {
+        format!("{value}")
+    }
 }
 
 /// Three or four digits of a number, as people read it.
 fn short(value: f64) -> String {
     let size = value.abs();
     if size > 0.0 && !(1e-2..1e4).contains(&size) {
-        format!("{value:.3e}")
+        super::text::scientific(value, 3)
     } else {
         let text = format!("{value:.3}");
         text.trim_end_matches('0').trim_end_matches('.').to_owned()
@@ -133,7 +141,8 @@ impl Table {
     /// first heading stays.
     #[must_use]
     pub fn transposed(&self) -> Self {
-        let mut columns = vec![Column::new(self.columns.first().map_or_else(String::new, Column::heading))];
+        let mut columns =
+            vec![Column::new(self.columns.first().map_or_else(String::new, Column::heading))];
         columns.extend(self.rows.iter().map(|row| Column::new(row[0].short())));
         let mut table = Self::new(columns);
         for (place, column) in self.columns.iter().enumerate().skip(1) {
@@ -150,9 +159,9 @@ impl Table {
     /// What the writer says.
     pub fn write_csv(&self, out: &mut impl Write) -> io::Result<()> {
         let mut writer = csv::Writer::from_writer(out);
-        writer.write_record(self.columns.iter().map(|c| &c.name))?;
+        writer.write_record(self.columns.iter().map(|c| &c.name)).map_err(io_error)?;
         for row in &self.rows {
-            writer.write_record(row.iter().map(Cell::exact))?;
+            writer.write_record(row.iter().map(Cell::exact)).map_err(io_error)?;
         }
         writer.flush()
     }
@@ -170,7 +179,8 @@ impl Table {
                 .zip(row)
                 .map(|(column, cell)| (column.name.clone(), cell.json()))
                 .collect();
-            serde_json::to_writer(&mut *out, &object)?;
+            let text = serde_json::to_string(&object).map_err(io::Error::other)?;
+            out.write_all(text.as_bytes())?;
         }
         out.write_all(if self.rows.is_empty() { b"[]\n" } else { b"\n]\n" })
     }
@@ -187,7 +197,14 @@ impl Table {
         let headings: Vec<String> = self.columns.iter().map(Column::heading).collect();
         let length = |text: &String| text.chars().count();
         let widths: Vec<usize> = (0..count)
-            .map(|c| shown.iter().map(|row| length(&row[c])).chain([length(&headings[c])]).max().unwrap_or(0))
+            .map(|c| {
+                shown
+                    .iter()
+                    .map(|row| length(&row[c]))
+                    .chain([length(&headings[c])])
+                    .max()
+                    .unwrap_or(0)
+            })
             .collect();
         let looks_like_number = |text: &str| text.parse::<f64>().is_ok();
         let to_right: Vec<bool> = (0..count)
@@ -218,6 +235,14 @@ impl Table {
     }
 }
 
+/// The error of the writer below, so that a closed pipe can be told.
+fn io_error(error: csv::Error) -> io::Error {
+    match error.into_kind() {
+        csv::ErrorKind::Io(error) => error,
+        other => io::Error::other(format!("{other:?}")),
+    }
+}
+
 #[cfg(test)]
 mod tests {
     use super::*;
@@ -244,7 +269,10 @@ mod tests {
         let mut out = Vec::new();
         table().write_json(&mut out).unwrap();
         let text = String::from_utf8(out).unwrap();
-        assert_eq!(text, "[\n{\"species\":\"H3O+, hot\",\"time\":1.25e-9},\n{\"species\":\"e-\",\"time\":null}\n]\n");
+        assert_eq!(
+            text,
+            "[\n{\"species\":\"H3O+, hot\",\"time\":1.25e-9},\n{\"species\":\"e-\",\"time\":null}\n]\n"
+        );
         let mut out = Vec::new();
         Table::new(vec![]).write_json(&mut out).unwrap();
         assert_eq!(out, b"[]\n");

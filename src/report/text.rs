@@ -28,6 +28,26 @@ pub fn wrap(text: &str, width: usize, indent: usize) -> String {
     out
 }
 
+/// A number as `6.12e-09`: `digits` after the point, two or more in the
+/// exponent, so that columns line up; zero is `0`.
+#[must_use]
+pub fn scientific(value: f64, digits: usize) -> String {
+    if value.abs() <= 0.0 {
+        return "0".to_owned();
+    }
+    let text = format!("{value:.digits$e}");
+    match text.split_once('e') {
+        Some((mantissa, exponent)) => {
+            let (sign, number) = match exponent.strip_prefix('-') {
+                Some(number) => ('-', number),
+                None => ('+', exponent),
+            };
+            format!("{mantissa}e{sign}{number:0>2}")
+        }
+        None => text,
+    }
+}
+
 /// A share of 0 to 1 as a bar of `width` characters; in eighths where symbols
 /// may be used.
 #[must_use]
@@ -134,6 +154,15 @@ mod tests {
     use super::*;
 
     #[test]
+    fn numbers_line_up() {
+        let cases =
+            [(6.123e-9, "6.12e-09"), (5e-101, "5.00e-101"), (0.0, "0"), (-2e4, "-2.00e+04")];
+        for (value, expected) in cases {
+            assert_eq!(scientific(value, 2), expected);
+        }
+    }
+
+    #[test]
     fn text_is_wrapped_at_words() {
         assert_eq!(wrap("one two three", 7, 2), "  one two\n  three");
         assert_eq!(wrap("incomprehensibility is long", 5, 0), "incomprehensibility\nis\nlong");
@@ -167,7 +196,8 @@ mod tests {
             detail: "k 1e-9".to_owned(),
         };
         let layout = Layout { width: 80, symbols: false, details: false };
-        let text = account("OH is made", &[line("A + B -> OH", 0.7), line("C -> OH", 0.2)], 3, layout);
+        let text =
+            account("OH is made", &[line("A + B -> OH", 0.7), line("C -> OH", 0.2)], 3, layout);
         assert_eq!(
             text,
             "  OH is made\n    70.0% #######...  70.0%  A + B -> OH\n    20.0% ##........  90.0%  C -> OH\n    10.0% #.........         3 others\n"

@@ -215,9 +215,9 @@ impl Table {
             })
             .collect();
         let mut line = |cells: &[String]| -> io::Result<()> {
-            let mut text = String::from(" ");
+            let mut text = String::new();
             for (c, cell) in cells.iter().enumerate() {
-                text.push(' ');
+                text.push_str("  ");
                 let width = widths[c];
                 if to_right[c] {
                     text.push_str(&format!("{cell:>width$}"));
@@ -285,7 +285,7 @@ mod tests {
         table.push(vec![Cell::text("yy"), Cell::Number(1.5)]);
         let mut out = Vec::new();
         table.write_text(&mut out).unwrap();
-        assert_eq!(String::from_utf8(out).unwrap(), "  a  b (K)\n  x      5\n  yy   1.5\n");
+        assert_eq!(String::from_utf8(out).unwrap(), "  a   b (K)\n  x       5\n  yy    1.5\n");
         let mut out = Vec::new();
         table.transposed().write_text(&mut out).unwrap();
         assert_eq!(String::from_utf8(out).unwrap(), "  a      x   yy\n  b (K)  5  1.5\n");

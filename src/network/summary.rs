@@ -147,6 +147,6 @@ fn ranked<'a>(words: impl Iterator<Item = &'a str>) -> Vec<Count> {
             count,
         })
         .collect();
-    list.sort_by(|a, b| b.count.cmp(&a.count));
+    list.sort_by_key(|entry| std::cmp::Reverse(entry.count));
     list
 }

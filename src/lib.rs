@@ -15,3 +15,17 @@ pub mod species;
 pub mod rates;
 
 pub mod network;
+
+pub mod sparse;
+
+pub mod integrate;
+
+pub mod kinetics;
+
+pub mod cloud;
+
+pub mod analysis;
+
+pub mod report;
+
+pub mod cli;

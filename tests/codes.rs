@@ -33,27 +33,19 @@ fn codes_in(text: &str) -> impl Iterator<Item = &str> {
         let area = word.split('-').next().unwrap_or("");
         word.contains('-')
             && AREAS.contains(&area)
-            && word
-                .chars()
-                .all(|c| c.is_ascii_lowercase() || c.is_ascii_digit() || c == '-')
+            && word.chars().all(|c| c.is_ascii_lowercase() || c.is_ascii_digit() || c == '-')
     })
 }
 
 #[test]
 fn every_code_in_the_sources_is_explained_and_every_explained_code_is_used() {
     let mut texts = Vec::new();
-    sources(
-        &Path::new(env!("CARGO_MANIFEST_DIR")).join("src"),
-        &mut texts,
-    );
+    sources(&Path::new(env!("CARGO_MANIFEST_DIR")).join("src"), &mut texts);
     let used: BTreeSet<&str> = texts.iter().flat_map(|text| codes_in(text)).collect();
     let listed: BTreeSet<&str> = CODES.iter().map(|(code, _)| *code).collect();
     assert_eq!(listed.len(), CODES.len(), "a code is listed twice");
     let unexplained: Vec<_> = used.difference(&listed).collect();
-    assert!(
-        unexplained.is_empty(),
-        "used but not listed: {unexplained:?}"
-    );
+    assert!(unexplained.is_empty(), "used but not listed: {unexplained:?}");
     let unused: Vec<_> = listed.difference(&used).collect();
     assert!(unused.is_empty(), "listed but not used: {unused:?}");
     assert!(explain("network-charge").is_some() && explain("nonsense").is_none());

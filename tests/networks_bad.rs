@@ -117,18 +117,12 @@ fn every_mistake_is_found_where_it_stands() {
         assert!(text.contains(old), "{old:?} is not in {file}");
         let broken = text.replacen(old, new, 1);
         let found = findings(&texts.clone().with(file, broken));
-        let list: Vec<String> = found
-            .iter()
-            .map(|f| format!("{} {}", f.code, f.place))
-            .collect();
+        let list: Vec<String> = found.iter().map(|f| format!("{} {}", f.code, f.place)).collect();
         if !list.contains(&(*expected).to_string()) {
             missed.push(format!("{new:?}: {expected} not in {list:?}"));
         }
         for finding in &found {
-            assert!(
-                !finding.remedy.is_empty() && !finding.message.is_empty(),
-                "{finding}"
-            );
+            assert!(!finding.remedy.is_empty() && !finding.message.is_empty(), "{finding}");
         }
     }
     assert!(missed.is_empty(), "{missed:#?}");
@@ -136,21 +130,12 @@ fn every_mistake_is_found_where_it_stands() {
 
 #[test]
 fn a_missing_file_and_broken_text_are_reported() {
-    let no_sources = NetworkTexts::new("net")
-        .with("network.toml", HEAD)
-        .with("species.csv", SPECIES);
-    let codes: Vec<String> = findings(&no_sources)
-        .iter()
-        .map(|f| format!("{} {}", f.code, f.place))
-        .collect();
-    assert!(
-        codes.contains(&"network-missing-file net/sources.csv".to_string()),
-        "{codes:?}"
-    );
-    assert!(
-        codes.contains(&"network-missing-file net/reactions.csv".to_string()),
-        "{codes:?}"
-    );
+    let no_sources =
+        NetworkTexts::new("net").with("network.toml", HEAD).with("species.csv", SPECIES);
+    let codes: Vec<String> =
+        findings(&no_sources).iter().map(|f| format!("{} {}", f.code, f.place)).collect();
+    assert!(codes.contains(&"network-missing-file net/sources.csv".to_string()), "{codes:?}");
+    assert!(codes.contains(&"network-missing-file net/reactions.csv".to_string()), "{codes:?}");
     let latin = [REACTIONS.as_bytes(), b"r3,\xe9"].concat();
     let found = findings(&good().with(R, latin));
     assert!(
@@ -176,15 +161,7 @@ fn all_mistakes_of_all_files_are_reported_at_once() {
     let mut codes: Vec<&str> = findings(&texts).iter().map(|f| f.code).collect();
     codes.sort_unstable();
     codes.dedup();
-    assert_eq!(
-        codes,
-        [
-            "network-key",
-            "network-law",
-            "network-number",
-            "network-unknown-source"
-        ]
-    );
+    assert_eq!(codes, ["network-key", "network-law", "network-number", "network-unknown-source"]);
 }
 
 #[test]

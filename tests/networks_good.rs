@@ -38,9 +38,7 @@ fn texts() -> NetworkTexts {
 }
 
 fn network() -> Network {
-    Network::from_texts("test", &texts())
-        .expect("a good network")
-        .network
+    Network::from_texts("test", &texts()).expect("a good network").network
 }
 
 fn find<'a>(network: &'a Network, id: &str) -> &'a Reaction {
@@ -55,10 +53,7 @@ fn rows_of_one_equation_are_one_reaction_whatever_the_order_of_its_species() {
     assert_eq!((reaction.id.as_str(), reaction.rows.len()), ("cold", 3));
     assert_eq!(reaction.equation, "H3+ + CO -> HCO+ + H2");
     // The same equation under two laws that do not share an axis: two reactions.
-    assert_ne!(
-        network.reaction_index("ray"),
-        network.reaction_index("light")
-    );
+    assert_ne!(network.reaction_index("ray"), network.reaction_index("light"));
 }
 
 #[test]
@@ -90,40 +85,21 @@ fn extrapolation_continues_the_nearest_formula_only_when_asked() {
     let network = network();
     let reaction = find(&network, "light2");
     let cases = [
-        (
-            Extrapolate::Hold,
-            1e-10 * (300.0 / 3000.0) * (-100.0_f64 / 3000.0).exp(),
-        ),
-        (
-            Extrapolate::Formula,
-            1e-10 * (300.0 / 6000.0) * (-100.0_f64 / 6000.0).exp(),
-        ),
+        (Extrapolate::Hold, 1e-10 * (300.0 / 3000.0) * (-100.0_f64 / 3000.0).exp()),
+        (Extrapolate::Formula, 1e-10 * (300.0 / 6000.0) * (-100.0_f64 / 6000.0).exp()),
     ];
     for (extrapolate, expected) in cases {
-        let conditions = Conditions {
-            temperature: 6000.0,
-            ..Conditions::default()
-        };
-        let got = network
-            .coefficient(reaction, &conditions, extrapolate)
-            .unwrap();
-        assert!(
-            (got / expected - 1.0).abs() < 1e-12,
-            "{extrapolate:?}: {got:e}"
-        );
+        let conditions = Conditions { temperature: 6000.0, ..Conditions::default() };
+        let got = network.coefficient(reaction, &conditions, extrapolate).unwrap();
+        assert!((got / expected - 1.0).abs() < 1e-12, "{extrapolate:?}: {got:e}");
     }
 }
 
 #[test]
 fn coefficients_say_what_they_multiply_and_in_which_unit() {
     let network = network();
-    let conditions = Conditions {
-        visual_extinction: 1.0,
-        ..Conditions::default()
-    };
-    let values = network
-        .coefficients(&conditions, Extrapolate::Hold)
-        .unwrap();
+    let conditions = Conditions { visual_extinction: 1.0, ..Conditions::default() };
+    let values = network.coefficients(&conditions, Extrapolate::Hold).unwrap();
     assert_eq!(values.len(), network.reactions.len());
     let cases = [
         ("cold", "H3+ CO", "cm3 s-1"),
@@ -133,11 +109,8 @@ fn coefficients_say_what_they_multiply_and_in_which_unit() {
     ];
     for (id, names, unit) in cases {
         let reaction = find(&network, id);
-        let multiplied: Vec<&str> = reaction
-            .depends_on
-            .iter()
-            .map(|i| network.species[*i].name.as_str())
-            .collect();
+        let multiplied: Vec<&str> =
+            reaction.depends_on.iter().map(|i| network.species[*i].name.as_str()).collect();
         assert_eq!(multiplied.join(" "), names, "{id}");
         assert_eq!(network.coefficient_unit(reaction), unit, "{id}");
     }
@@ -167,34 +140,24 @@ fn elements_grains_and_charge_are_conserved_by_every_reaction() {
 #[test]
 fn a_network_survives_writing_and_reading() {
     let network = network();
-    let again = Network::from_texts("test", &network.to_texts("t"))
-        .unwrap()
-        .network;
+    let again = Network::from_texts("test", &network.to_texts("t")).unwrap().network;
     assert_eq!(again.species, network.species);
     assert_eq!(again.sources, network.sources);
     let conditions = Conditions::default();
     assert_eq!(
         again.coefficients(&conditions, Extrapolate::Hold).unwrap(),
-        network
-            .coefficients(&conditions, Extrapolate::Hold)
-            .unwrap()
+        network.coefficients(&conditions, Extrapolate::Hold).unwrap()
     );
 }
 
 #[test]
 fn a_part_keeps_only_what_it_can() {
     let network = network();
-    let keep: Vec<usize> = ["e-", "A", "B+"]
-        .iter()
-        .map(|name| network.species_index(name).unwrap())
-        .collect();
+    let keep: Vec<usize> =
+        ["e-", "A", "B+"].iter().map(|name| network.species_index(name).unwrap()).collect();
     let all: Vec<usize> = (0..network.reactions.len() + 3).collect();
     let part = network.subset(&keep, &all);
-    let ids: Vec<&str> = part
-        .reactions
-        .iter()
-        .map(|reaction| reaction.id.as_str())
-        .collect();
+    let ids: Vec<&str> = part.reactions.iter().map(|reaction| reaction.id.as_str()).collect();
     assert_eq!(ids, ["ray", "light"]);
     assert_eq!(part.species.len(), 3);
     assert_eq!(part.conserved().len(), 2);
@@ -224,21 +187,15 @@ fn a_network_may_build_on_another() {
         assert_eq!(network.species.len(), species, "{line}");
         assert_eq!(network.title, "variant");
     }
-    let errors = build(
-        format!("{head}without = [\"lihgt\"]\nspecies = [\"HH\"]"),
-        more,
-    )
-    .unwrap_err();
+    let errors =
+        build(format!("{head}without = [\"lihgt\"]\nspecies = [\"HH\"]"), more).unwrap_err();
     let codes: Vec<&str> = errors.iter().map(|f| f.code).collect();
     assert!(codes.contains(&"network-unknown-id"), "{codes:?}");
     assert!(codes.contains(&"network-unknown-species"), "{codes:?}");
     // A row of the base may not be given again without leaving it out.
     let again = more.replace("H+ + e- -> H,thermal", "H + H -> H2,dust_h2");
     assert!(
-        build(head.to_string(), &again)
-            .unwrap_err()
-            .iter()
-            .any(|f| f.code == "network-overlap")
+        build(head.to_string(), &again).unwrap_err().iter().any(|f| f.code == "network-overlap")
     );
 }
 
@@ -248,10 +205,7 @@ fn networks_that_build_on_themselves_are_refused() {
         || NetworkTexts::new("v").with("network.toml", "title = \"x\"\nbase = \"x\"\n");
     let texts = loop_texts().with_resolver(move |_| Some(loop_texts()));
     let errors = Network::from_texts("x", &texts).unwrap_err();
-    assert!(
-        errors.iter().any(|finding| finding.code == "network-base"),
-        "{errors:?}"
-    );
+    assert!(errors.iter().any(|finding| finding.code == "network-base"), "{errors:?}");
 }
 
 #[test]

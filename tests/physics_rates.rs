@@ -25,10 +25,8 @@ const NEUTRALS: [(&str, f64, f64); 13] = [
 ];
 
 fn neutral(name: &str) -> Species {
-    let (_, polarizability, dipole) = NEUTRALS
-        .iter()
-        .find(|(known, ..)| *known == name)
-        .expect("a neutral of the table");
+    let (_, polarizability, dipole) =
+        NEUTRALS.iter().find(|(known, ..)| *known == name).expect("a neutral of the table");
     let mut species = Species::new(name, None).expect("a readable name");
     species.polarizability_a3 = Some(*polarizability);
     species.dipole_d = Some(*dipole);
@@ -65,11 +63,7 @@ fn an_ion_meets_a_molecule_without_dipole_at_the_langevin_rate() {
         species.dipole_d = None;
         let ion = Species::new(ion, None).unwrap();
         let got = capture::of_pair(&ion, &species, 10.0).unwrap();
-        assert!(
-            (got / expected - 1.0).abs() < 1e-3,
-            "{} + {name}: {got:e}",
-            ion.name
-        );
+        assert!((got / expected - 1.0).abs() < 1e-3, "{} + {name}: {got:e}", ion.name);
     }
 }
 
@@ -144,10 +138,7 @@ fn slower_ion_reactions_stay_below_capture() {
     ];
     for (ion, name, measured) in cases {
         let limit = captured(ion, name, 300.0);
-        assert!(
-            measured < limit && limit < 3.0 * measured,
-            "{ion} + {name}: {limit:e}"
-        );
+        assert!(measured < limit && limit < 3.0 * measured, "{ion} + {name}: {limit:e}");
     }
 }
 
@@ -157,18 +148,10 @@ fn the_thermal_law_carries_the_evaluations_of_combustion() {
     let temperatures = [300.0, 500.0, 1000.0, 2000.0];
     let cases = [
         // 3.56e-16 T^1.52 exp(-1736/T): Oldenborg et al. 1992, J. Phys. Chem. 96, 8426.
-        (
-            "OH + H2",
-            (3.56e-16, 1.52, 1736.0),
-            [6.361e-15, 1.400e-13, 2.278e-12, 1.556e-11],
-        ),
+        ("OH + H2", (3.56e-16, 1.52, 1736.0), [6.361e-15, 1.400e-13, 2.278e-12, 1.556e-11]),
         // 8.5e-20 T^2.67 exp(-3160/T): Baulch et al. 2005, J. Phys. Chem. Ref. Data
         // 34, 757 (provenance: memory).
-        (
-            "O + H2",
-            (8.5e-20, 2.67, 3160.0),
-            [9.306e-18, 2.460e-15, 3.690e-13, 1.140e-11],
-        ),
+        ("O + H2", (8.5e-20, 2.67, 3160.0), [9.306e-18, 2.460e-15, 3.690e-13, 1.140e-11]),
         // 2.16e8 T^1.51 exp(-1726/T) cm3 mol-1 s-1: Smith et al. 1999, mechanism of
         // natural-gas combustion; listed at 300 and 1000 K.
         (
@@ -178,11 +161,7 @@ fn the_thermal_law_carries_the_evaluations_of_combustion() {
         ),
     ];
     for (case, (scale, beta, gamma), expected) in cases {
-        let numbers = Numbers {
-            alpha: scale * 300_f64.powf(beta),
-            beta,
-            gamma,
-        };
+        let numbers = Numbers { alpha: scale * 300_f64.powf(beta), beta, gamma };
         for (temperature, expected) in temperatures.into_iter().zip(expected) {
             if expected.is_nan() {
                 continue;
@@ -197,16 +176,9 @@ fn the_thermal_law_carries_the_evaluations_of_combustion() {
 #[test]
 fn h2_forms_on_dust_as_fast_as_diffuse_clouds_ask() {
     // R = 1e-17 to 5e-17 cm3 s-1 near 80 K: Jura 1975, Astrophys. J. 197, 575.
-    let numbers = Numbers {
-        alpha: 3e-17,
-        beta: 0.5,
-        gamma: 0.0,
-    };
-    let conditions = Conditions {
-        hydrogen_density: 1.0,
-        dust_temperature: 15.0,
-        ..Conditions::default()
-    };
+    let numbers = Numbers { alpha: 3e-17, beta: 0.5, gamma: 0.0 };
+    let conditions =
+        Conditions { hydrogen_density: 1.0, dust_temperature: 15.0, ..Conditions::default() };
     let got = dust::h2_formation(numbers, &conditions, 80.0);
     assert!((1e-17..=5e-17).contains(&got), "{got:e}");
 }

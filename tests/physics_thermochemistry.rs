@@ -99,12 +99,7 @@ fn reaction_enthalpies_follow_from_the_species() {
         ("S+ + H2", "HS+ + H", 10680.0),
     ];
     for (left, right, expected) in cases {
-        let sum = |text| {
-            side(text)
-                .iter()
-                .map(|s| s.enthalpy_kj_mol.unwrap())
-                .sum::<f64>()
-        };
+        let sum = |text| side(text).iter().map(|s| s.enthalpy_kj_mol.unwrap()).sum::<f64>();
         let got = (sum(right) - sum(left)) * KELVIN_PER_KJ_MOL;
         assert!((got - expected).abs() < 60.0, "{left} -> {right}: {got}");
     }

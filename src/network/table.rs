@@ -19,18 +19,12 @@ pub(super) struct Column {
 
 /// Shorthand for a column that must be there.
 pub(super) const fn needed(name: &'static str) -> Column {
-    Column {
-        name,
-        required: true,
-    }
+    Column { name, required: true }
 }
 
 /// Shorthand for a column that may be left out.
 pub(super) const fn optional(name: &'static str) -> Column {
-    Column {
-        name,
-        required: false,
-    }
+    Column { name, required: false }
 }
 
 /// A table: its file and its records, looked up by column name.
@@ -73,43 +67,26 @@ impl Table {
                 continue;
             }
             let place = Place::new(file, record[0].line, record[0].column);
-            let message = format!(
-                "{} cells where the header has {}",
-                record.len(),
-                header.len()
-            );
+            let message = format!("{} cells where the header has {}", record.len(), header.len());
             findings.push(
                 Finding::error("network-fields", place, message)
                     .remedy("put a cell that holds a comma in quotes, or add what is missing"),
             );
         }
-        Some(Self {
-            file: file.to_string(),
-            columns: positions,
-            records: kept,
-        })
+        Some(Self { file: file.to_string(), columns: positions, records: kept })
     }
 
     /// The records, in order.
     pub(super) fn records(&self) -> impl Iterator<Item = Record<'_>> {
-        self.records
-            .iter()
-            .map(|cells| Record { table: self, cells })
+        self.records.iter().map(|cells| Record { table: self, cells })
     }
 }
 
 impl<'a> Record<'a> {
     /// The cell of a column; an empty one when the table lacks the column.
     pub(super) fn cell(&self, column: &str) -> &'a Cell {
-        static EMPTY: Cell = Cell {
-            text: String::new(),
-            line: 0,
-            column: 0,
-        };
-        self.table
-            .columns
-            .get(column)
-            .map_or(&EMPTY, |at| &self.cells[*at])
+        static EMPTY: Cell = Cell { text: String::new(), line: 0, column: 0 };
+        self.table.columns.get(column).map_or(&EMPTY, |at| &self.cells[*at])
     }
 
     /// The text of a column.
@@ -149,11 +126,7 @@ fn read_header(
             wrong(place, format!("there is no column `{text}`"), remedy);
         } else if positions.contains_key(text) {
             twice = true;
-            wrong(
-                place,
-                format!("column `{text}` stands twice"),
-                "leave one out".to_string(),
-            );
+            wrong(place, format!("column `{text}` stands twice"), "leave one out".to_string());
         } else {
             positions.insert(text.clone(), at);
         }
@@ -167,10 +140,7 @@ fn read_header(
         return (!twice).then_some(positions);
     }
     let message = format!("the header lacks {}", missing.join(", "));
-    let remedy = format!(
-        "the first line is `{}`",
-        names().collect::<Vec<_>>().join(",")
-    );
+    let remedy = format!("the first line is `{}`", names().collect::<Vec<_>>().join(","));
     wrong(Place::new(file, header[0].line, 1), message, remedy);
     None
 }

@@ -54,22 +54,9 @@ pub struct ConditionProblem {
 
 impl std::fmt::Display for ConditionProblem {
     fn fmt(&self, f: &mut std::fmt::Formatter<'_>) -> std::fmt::Result {
-        let Self {
-            key,
-            value,
-            low,
-            high,
-            unit,
-        } = self;
-        let unit = if *unit == "1" {
-            String::new()
-        } else {
-            format!(" {unit}")
-        };
-        write!(
-            f,
-            "{key} = {value:?}{unit} is outside {low:?} to {high:?}{unit}"
-        )
+        let Self { key, value, low, high, unit } = self;
+        let unit = if *unit == "1" { String::new() } else { format!(" {unit}") };
+        write!(f, "{key} = {value:?}{unit} is outside {low:?} to {high:?}{unit}")
     }
 }
 
@@ -131,7 +118,7 @@ impl Conditions {
     pub const KEYS: [(&'static str, Dimension, f64, f64); 14] = [
         ("hydrogen_density", Dimension::NumberDensity, 1e-3, 1e12),
         ("temperature", Dimension::Temperature, 1.0, 1e5),
-        ("dust_temperature", Dimension::Temperature, 1.0, 3e3),
+        ("dust_temperature", Dimension::Temperature, 1.0, 1e5),
         ("cosmic_ray_ionization_rate", Dimension::Rate, 0.0, 1e-10),
         ("visual_extinction", Dimension::Extinction, 0.0, 1e3),
         ("radiation_field", Dimension::Dimensionless, 0.0, 1e8),
@@ -142,12 +129,7 @@ impl Conditions {
         ("n2_column", Dimension::ColumnDensity, 0.0, 1e24),
         ("doppler_width", Dimension::Speed, 0.01, 100.0),
         ("grain_radius", Dimension::Length, 1e-3, 10.0),
-        (
-            "reference_electron_abundance",
-            Dimension::Dimensionless,
-            1e-15,
-            2.0,
-        ),
+        ("reference_electron_abundance", Dimension::Dimensionless, 1e-15, 2.0),
     ];
 
     /// The conditions in the order of [`Conditions::KEYS`], to be read or set.

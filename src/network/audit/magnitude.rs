@@ -37,10 +37,7 @@ pub(super) fn check(network: &Network, options: &AuditOptions, findings: &mut Ve
         };
         let worst = temperatures(options.coldest, options.hottest, 60)
             .filter_map(|t| held(network, reaction, t).map(|value| (value, t)))
-            .fold(
-                (0.0, 0.0),
-                |best: (f64, f64), now| if now.0 > best.0 { now } else { best },
-            );
+            .fold((0.0, 0.0), |best: (f64, f64), now| if now.0 > best.0 { now } else { best });
         if worst.0 > limit {
             let (value, temperature) = worst;
             let row = reaction.active_row(temperature).0;

@@ -28,10 +28,9 @@ pub(super) fn check(network: &Network, options: &AuditOptions, findings: &mut Ve
         short += 1;
         let mut worst: Option<(f64, String, &Row)> = None;
         for s in &stretches {
-            let (Some(kept), Some(continued)) = (
-                of_row(network, reaction, s.row, s.edge),
-                of_row(network, reaction, s.row, s.far),
-            ) else {
+            let (Some(kept), Some(continued)) =
+                (of_row(network, reaction, s.row, s.edge), of_row(network, reaction, s.row, s.far))
+            else {
                 continue;
             };
             if is_nothing(reaction, kept) && is_nothing(reaction, continued) {
@@ -83,44 +82,20 @@ fn stretches(reaction: &Reaction, coldest: f64, hottest: f64) -> Vec<Stretch<'_>
     let first = &rows[0];
     if first.t_min > coldest {
         let (low, high) = (coldest, first.t_min.min(hottest));
-        list.push(Stretch {
-            low,
-            high,
-            row: first,
-            edge: first.t_min,
-            far: low,
-        });
+        list.push(Stretch { low, high, row: first, edge: first.t_min, far: low });
     }
     for pair in rows.windows(2) {
         let (low, high) = (pair[0].t_max, pair[1].t_min);
         if low < high && low < hottest && high > coldest {
             let middle = 0.5 * (low + high);
-            list.push(Stretch {
-                low,
-                high,
-                row: &pair[0],
-                edge: low,
-                far: middle,
-            });
-            list.push(Stretch {
-                low,
-                high,
-                row: &pair[1],
-                edge: high,
-                far: middle,
-            });
+            list.push(Stretch { low, high, row: &pair[0], edge: low, far: middle });
+            list.push(Stretch { low, high, row: &pair[1], edge: high, far: middle });
         }
     }
     let last = &rows[rows.len() - 1];
     if last.t_max < hottest {
         let (low, high) = (last.t_max.max(coldest), hottest);
-        list.push(Stretch {
-            low,
-            high,
-            row: last,
-            edge: last.t_max,
-            far: high,
-        });
+        list.push(Stretch { low, high, row: last, edge: last.t_max, far: high });
     }
     list
 }

@@ -11,15 +11,10 @@ pub(super) fn check(network: &Network, _: &AuditOptions, findings: &mut Vec<Find
     let mut destroyed = vec![false; network.species.len()];
     let mut used = vec![false; network.species.len()];
     // Cold, and thin enough for starlight to come in.
-    let conditions = Conditions {
-        visual_extinction: 1.0,
-        ..Conditions::default()
-    }
-    .with_default_columns();
+    let conditions =
+        Conditions { visual_extinction: 1.0, ..Conditions::default() }.with_default_columns();
     for reaction in &network.reactions {
-        let value = network
-            .coefficient(reaction, &conditions, Extrapolate::Hold)
-            .unwrap_or(0.0);
+        let value = network.coefficient(reaction, &conditions, Extrapolate::Hold).unwrap_or(0.0);
         let count =
             |list: &[usize], index: usize| list.iter().filter(|other| **other == index).count();
         for index in reaction.reactants.iter().chain(&reaction.products).copied() {
@@ -35,12 +30,7 @@ pub(super) fn check(network: &Network, _: &AuditOptions, findings: &mut Vec<Find
     }
     let place = file_beside(network, "species.csv");
     let cases = [
-        (
-            "audit-never-used",
-            "take part in no reaction",
-            &used,
-            "leave them out",
-        ),
+        ("audit-never-used", "take part in no reaction", &used, "leave them out"),
         (
             "audit-never-made",
             "are made by nothing at 10 K",

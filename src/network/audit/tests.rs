@@ -30,15 +30,10 @@ fn audited(rows: &[&str]) -> Vec<Finding> {
         .with("species.csv", SPECIES)
         .with("reactions.csv", text)
         .with("sources.csv", "key,citation\natct,Tables\n");
-    let network = Network::from_texts("test", &texts)
-        .expect("a network that loads")
-        .network;
+    let network = Network::from_texts("test", &texts).expect("a network that loads").network;
     let findings = audit(&network, &AuditOptions::default());
     // Species without reactions are not what these tests are about.
-    findings
-        .into_iter()
-        .filter(|f| !f.code.starts_with("audit-never"))
-        .collect()
+    findings.into_iter().filter(|f| !f.code.starts_with("audit-never")).collect()
 }
 
 #[test]
@@ -53,11 +48,7 @@ fn sound_rows_raise_nothing() {
 #[test]
 fn each_planted_fault_is_found_at_its_row() {
     let cases: &[(&[&str], &str, u32)] = &[
-        (
-            &["O + H2 -> OH + H,thermal,3.4e-13,2.7,3150,300,3000"],
-            "audit-range",
-            2,
-        ),
+        (&["O + H2 -> OH + H,thermal,3.4e-13,2.7,3150,300,3000"], "audit-range", 2),
         (
             &[
                 "OH + H2 -> H2O + H,thermal,1e-12,0,2000,5,300",
@@ -66,46 +57,14 @@ fn each_planted_fault_is_found_at_its_row() {
             "audit-seam",
             3,
         ),
-        (
-            &["O + OH -> H + O + O,thermal,1e-8,0,0,5,3000"],
-            "audit-too-fast",
-            2,
-        ),
-        (
-            &["H+ + e- -> H,thermal,1e-4,0,0,5,3000"],
-            "audit-too-fast",
-            2,
-        ),
-        (
-            &["O+ + H2 -> OH+ + H,thermal,3e-9,0,0,5,3000"],
-            "audit-beyond-capture",
-            2,
-        ),
-        (
-            &["O + H2 -> OH + H,thermal,1e-12,0,0,5,3000"],
-            "audit-uphill",
-            2,
-        ),
-        (
-            &["O + H2 -> OH + H,thermal,1e-12,0,100,5,3000"],
-            "audit-uphill",
-            2,
-        ),
-        (
-            &["O+ + OH -> OH+ + O,capture,1,0,0,5,3000"],
-            "audit-no-dipole",
-            0,
-        ),
-        (
-            &["O+ + H2 -> OH+ + H,thermal,1.5e-9,0,500,5,3000"],
-            "audit-ion-barrier",
-            2,
-        ),
-        (
-            &["OH + H2 -> H2O + H,thermal,1e-12,0,2000,5,3000"],
-            "audit-neutral-barrier",
-            0,
-        ),
+        (&["O + OH -> H + O + O,thermal,1e-8,0,0,5,3000"], "audit-too-fast", 2),
+        (&["H+ + e- -> H,thermal,1e-4,0,0,5,3000"], "audit-too-fast", 2),
+        (&["O+ + H2 -> OH+ + H,thermal,3e-9,0,0,5,3000"], "audit-beyond-capture", 2),
+        (&["O + H2 -> OH + H,thermal,1e-12,0,0,5,3000"], "audit-uphill", 2),
+        (&["O + H2 -> OH + H,thermal,1e-12,0,100,5,3000"], "audit-uphill", 2),
+        (&["O+ + OH -> OH+ + O,capture,1,0,0,5,3000"], "audit-no-dipole", 0),
+        (&["O+ + H2 -> OH+ + H,thermal,1.5e-9,0,500,5,3000"], "audit-ion-barrier", 2),
+        (&["OH + H2 -> H2O + H,thermal,1e-12,0,2000,5,3000"], "audit-neutral-barrier", 0),
         (
             &[
                 "OH + H2 -> H2O + H,thermal,2e-12,0,2100,5,3000",
@@ -114,24 +73,13 @@ fn each_planted_fault_is_found_at_its_row() {
             "audit-detailed-balance",
             2,
         ),
-        (
-            &["H + O -> H + O,thermal,1e-12,0,0,5,3000"],
-            "audit-no-change",
-            2,
-        ),
-        (
-            &["O+ + e- -> O,thermal,1e-9,0,-60,100,3000"],
-            "audit-continuation",
-            0,
-        ),
+        (&["H + O -> H + O,thermal,1e-12,0,0,5,3000"], "audit-no-change", 2),
+        (&["O+ + e- -> O,thermal,1e-9,0,-60,100,3000"], "audit-continuation", 0),
     ];
     for (rows, code, line) in cases {
         let findings = audited(rows);
         let found: Vec<(&str, u32)> = findings.iter().map(|f| (f.code, f.place.line)).collect();
-        assert!(
-            found.contains(&(*code, *line)),
-            "{rows:?}: {code} {line} not in {found:?}"
-        );
+        assert!(found.contains(&(*code, *line)), "{rows:?}: {code} {line} not in {found:?}");
     }
 }
 
@@ -157,20 +105,8 @@ fn unmade_and_undestroyed_species_are_named() {
         "note[audit-unused-source] f/sources.csv: 1 sources are cited by nothing: k",
         "note[audit-made-up-element] f/species.csv: elements without a known weight: Q",
     ] {
-        assert!(
-            found.iter().any(|text| text.starts_with(expected)),
-            "{expected}: {found:#?}"
-        );
+        assert!(found.iter().any(|text| text.starts_with(expected)), "{expected}: {found:#?}");
     }
-    let each = audit(
-        &network,
-        &AuditOptions {
-            every_row: true,
-            ..AuditOptions::default()
-        },
-    );
-    assert!(
-        each.iter()
-            .any(|f| f.code == "audit-no-source" && f.place.line == 2)
-    );
+    let each = audit(&network, &AuditOptions { every_row: true, ..AuditOptions::default() });
+    assert!(each.iter().any(|f| f.code == "audit-no-source" && f.place.line == 2));
 }

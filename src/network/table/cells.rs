@@ -17,11 +17,7 @@ pub(in crate::network) struct Cell {
 
 /// Cells of all records that are not empty lines.
 pub(super) fn split(file: &str, text: &str, findings: &mut Vec<Finding>) -> Vec<Vec<Cell>> {
-    let mut reader = Reader {
-        letters: text.chars().peekable(),
-        line: 1,
-        column: 1,
-    };
+    let mut reader = Reader { letters: text.chars().peekable(), line: 1, column: 1 };
     let mut records = Vec::new();
     while reader.letters.peek().is_some() {
         let record = reader.record(file, findings);
@@ -86,14 +82,7 @@ impl Reader<'_> {
                 Some(letter) => text.push(letter),
             }
         };
-        (
-            Cell {
-                text: text.trim_end().to_string(),
-                line,
-                column,
-            },
-            more,
-        )
+        (Cell { text: text.trim_end().to_string(), line, column }, more)
     }
 
     fn quoted(&mut self, file: &str, findings: &mut Vec<Finding>) -> (Cell, bool) {
@@ -131,19 +120,9 @@ impl Reader<'_> {
             }
         };
         if !after.trim().is_empty() {
-            quote(
-                "text follows the closing quote of this cell",
-                "double quotes inside quotes",
-            );
+            quote("text follows the closing quote of this cell", "double quotes inside quotes");
         }
-        (
-            Cell {
-                text: text.trim_end().to_string(),
-                line,
-                column,
-            },
-            more,
-        )
+        (Cell { text: text.trim_end().to_string(), line, column }, more)
     }
 }
 

@@ -1,0 +1,181 @@
+//! Linear sums that the exact solution conserves, and the projection that
+//! keeps them to rounding.
+//!
+//! A Rosenbrock method conserves linear sums in exact arithmetic; in floating
+//! point they drift with the rounding of the solves, which for a trace element
+//! is far above the last digit. Each accepted state is therefore moved onto its
+//! sums by the smallest change relative to the abundances: minimise
+//! sum (dy_i)^2 / |y_i| subject to A (y + dy) = b, that is
+//! dy = |y| A^T lambda with (A |y| A^T) lambda = b - A y. Every unknown changes
+//! by the same tiny relative amount per sum, so signs are kept.
+
+use crate::sparse::Lane;
+
+/// The conserved sums of a system: `sum_i weight_i y_i` is constant.
+#[derive(Clone, Debug, Default, PartialEq)]
+pub struct Invariants {
+    rows: Vec<Vec<(usize, f64)>>,
+    /// The same weights by unknown, as (sum, weight).
+    columns: Vec<Vec<(usize, f64)>>,
+    /// Pairs of sums, each with the unknowns that enter both:
+    /// (first, second, [(unknown, product of weights)]).
+    pairs: Vec<(usize, usize, Vec<(usize, f64)>)>,
+}
+
+/// More sums than any network has elements.
+const MOST: usize = 24;
+
+impl Invariants {
+    /// From dense rows of weights over `size` unknowns.
+    ///
+    /// # Panics
+    /// If there are more than 24 rows.
+    #[must_use]
+    pub fn new(size: usize, weights: &[Vec<f64>]) -> Self {
+        assert!(weights.len() <= MOST, "at most {MOST} conserved sums");
+        let sparse = |row: &Vec<f64>| -> Vec<(usize, f64)> {
+            row.iter().copied().enumerate().filter(|&(_, w)| w.abs() > 0.0).collect()
+        };
+        let mut pairs = Vec::new();
+        for a in 0..weights.len() {
+            for b in 0..=a {
+                let product: Vec<f64> =
+                    weights[a].iter().zip(&weights[b]).map(|(x, y)| x * y).collect();
+                pairs.push((a, b, sparse(&product)));
+            }
+        }
+        let columns =
+            (0..size).map(|i| sparse(&weights.iter().map(|row| row[i]).collect())).collect();
+        Self { rows: weights.iter().map(sparse).collect(), columns, pairs }
+    }
+
+    /// Number of sums.
+    #[must_use]
+    pub fn count(&self) -> usize {
+        self.rows.len()
+    }
+
+    /// The weights of one sum, as (unknown, weight).
+    #[must_use]
+    pub fn row(&self, sum: usize) -> &[(usize, f64)] {
+        &self.rows[sum]
+    }
+
+    /// Number of unknowns.
+    #[must_use]
+    pub fn size(&self) -> usize {
+        self.columns.len()
+    }
+
+    /// Evaluates one sum.
+    #[inline(always)]
+    pub fn sum<L: Lane>(&self, sum: usize, y: &[L]) -> L {
+        let mut total = L::zero();
+        for &(i, w) in &self.rows[sum] {
+            total = y[i].mul_add(L::splat(w), total);
+        }
+        total
+    }
+
+    /// Evaluates all sums.
+    #[must_use]
+    pub fn sums<L: Lane>(&self, y: &[L]) -> Vec<L> {
+        (0..self.count()).map(|s| self.sum(s, y)).collect()
+    }
+
+    /// Moves `y` onto `targets`.
+    ///
+    /// # Shape
+    /// `targets`: `[count]`, `y`: `[size]`.
+    #[inline(always)]
+    pub fn project<L: Lane>(&self, targets: &[L], y: &mut [L]) {
+        let m = self.count();
+        let mut matrix = [[L::zero(); MOST]; MOST];
+        let mut x = [L::zero(); MOST];
+        // A sum without members in this cell (an element that is absent) has a
+        // zero row; the tiny shift makes its multiplier zero instead of 0/0.
+        let tiny = L::splat(1e-200);
+        for (a, b, members) in &self.pairs {
+            let mut total = if a == b { tiny } else { L::zero() };
+            for &(i, w) in members {
+                total = y[i].abs().mul_add(L::splat(w), total);
+            }
+            matrix[*a][*b] = total;
+        }
+        for (sum, x) in x.iter_mut().enumerate().take(m) {
+            *x = targets[sum] - self.sum(sum, y);
+        }
+        // L D L^T of the symmetric matrix, then both substitutions.
+        let mut inverse = [L::zero(); MOST];
+        for a in 0..m {
+            for b in 0..a {
+                let mut value = matrix[a][b];
+                for c in 0..b {
+                    value = value - matrix[a][c] * matrix[b][c] * matrix[c][c];
+                }
+                matrix[a][b] = value * inverse[b];
+            }
+            for c in 0..a {
+                matrix[a][a] = matrix[a][a] - matrix[a][c] * matrix[a][c] * matrix[c][c];
+            }
+            matrix[a][a] = matrix[a][a].max(tiny);
+            inverse[a] = L::splat(1.0) / matrix[a][a];
+            for c in 0..a {
+                x[a] = x[a] - matrix[a][c] * x[c];
+            }
+        }
+        for a in (0..m).rev() {
+            x[a] = x[a] * inverse[a];
+            for c in a + 1..m {
+                x[a] = x[a] - matrix[c][a] * x[c];
+            }
+        }
+        for (y, column) in y.iter_mut().zip(&self.columns) {
+            let mut relative = L::zero();
+            for &(sum, w) in column {
+                relative = x[sum].mul_add(L::splat(w), relative);
+            }
+            *y = y.abs().mul_add(relative, *y);
+        }
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::sparse::{Fused, Single};
+
+    type One = Single<Fused>;
+
+    #[test]
+    fn a_disturbed_mixture_returns_to_its_sums_and_keeps_its_signs() {
+        // Sums with abundances from 1 down to 1e-12.
+        let weights = vec![
+            vec![2.0, 1.0, 0.0, 0.0, 2.0, 0.0],
+            vec![0.0, 0.0, 1.0, 0.0, 1.0, 0.0],
+            vec![0.0, 0.0, 0.0, 1.0, 0.0, -1.0],
+        ];
+        let invariants = Invariants::new(6, &weights);
+        let exact = [0.5, 1e-3, 1e-9, 1e-12, 3e-9, 1e-12];
+        let lanes = |v: &[f64]| -> Vec<One> { v.iter().map(|&x| One::splat(x)).collect() };
+        let targets = invariants.sums(&lanes(&exact));
+        let disturbed: Vec<f64> =
+            exact.iter().enumerate().map(|(i, x)| x * (1.0 + 1e-7 * i as f64)).collect();
+        let mut y = lanes(&disturbed);
+        invariants.project(&targets, &mut y);
+        for sum in 0..2 {
+            let (got, want) = (invariants.sum(sum, &y).get(0), targets[sum].get(0));
+            assert!((got / want - 1.0).abs() < 1e-14, "sum {sum}: {got:e} against {want:e}");
+        }
+        assert!(invariants.sum(2, &y).get(0).abs() < 1e-25);
+        assert!(y.iter().all(|v| v.get(0) > 0.0));
+    }
+
+    #[test]
+    fn an_absent_element_does_no_harm() {
+        let invariants = Invariants::new(2, &[vec![1.0, 0.0], vec![0.0, 1.0]]);
+        let mut y = vec![One::splat(0.3), One::splat(0.0)];
+        invariants.project(&[One::splat(0.25), One::splat(0.0)], &mut y);
+        assert!((y[0].get(0) - 0.25).abs() < 1e-16 && y[1].get(0).abs() < 1e-300);
+    }
+}

@@ -258,10 +258,7 @@ fn read_cloud(section: &mut Section<'_>, findings: &mut Vec<Finding>) -> Option<
         false,
         &mut c.reference_electron_abundance,
     );
-    let given = |key| places.iter().any(|(name, _)| *name == key);
-    // Dust that follows the gas has no mistake of its own.
-    let follows = |key| key == "dust_temperature" && !given(key);
-    for problem in c.validate().into_iter().filter(|problem| !follows(problem.key)) {
+    for problem in c.validate() {
         let place = places
             .iter()
             .find(|(key, _)| *key == problem.key)

@@ -135,7 +135,7 @@ pub const CODES: &[(&str, &str)] = &[
     (
         "audit-too-fast",
         "A coefficient is larger than any collision of that kind: 1e-5 cm3 s-1 for two \
-         bodies with an electron, 1e-6 with an ion, 3e-9 for neutrals, 1e-25 cm6 s-1 for \
+         opposite charges, 1e-6 with an ion, 3e-9 for neutrals, 1e-25 cm6 s-1 for \
          three bodies.",
     ),
     (

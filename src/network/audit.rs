@@ -132,15 +132,26 @@ fn factor_between(a: f64, b: f64) -> f64 {
     }
 }
 
-/// A factor for people: one digit after the point, or a power of ten.
+/// A factor for people.
 fn factor_text(factor: f64) -> String {
     if factor < 1e3 {
         format!("a factor {factor:.1}")
-    } else if factor < 1e300 {
-        format!("a factor 1e{:.0}", libm::log10(factor))
+    } else if factor < 1e6 {
+        format!("a factor {factor:.0e}")
     } else {
-        "an unbounded factor".to_string()
+        "more than a factor 1e6".to_string()
     }
+}
+
+/// A coefficient for people: two digits, or 0.
+fn number_text(value: f64) -> String {
+    if value > 0.0 { format!("{value:.1e}") } else { "0".to_string() }
+}
+
+/// Whether a coefficient does nothing in a cloud's life: below 1e-22 s^-1 or
+/// cm^3 s^-1 (once in 3e10 yr at 1e4 cm^-3), 1e-36 cm^6 s^-1. Our choice.
+fn is_nothing(reaction: &Reaction, value: f64) -> bool {
+    value < if reaction.depends_on.len() > 2 { 1e-36 } else { 1e-22 }
 }
 
 #[cfg(test)]

@@ -3,7 +3,7 @@
 use std::collections::BTreeMap;
 
 use crate::diagnostic::{self, Finding, Place, nearest};
-use crate::species::Species;
+use crate::species::{GRAIN, Species};
 
 use super::assemble::{self, Entry};
 use super::head::{Head, Word};
@@ -258,7 +258,7 @@ fn check_elements(head: &Head, species: &[Species], findings: &mut Vec<Finding>)
     let mut missing: Vec<&str> = species
         .iter()
         .flat_map(|one| one.atoms.iter().map(|(element, _)| element.as_str()))
-        .filter(|element| !claimed.iter().any(|word| word.text == *element))
+        .filter(|element| *element != GRAIN && !claimed.iter().any(|word| word.text == *element))
         .collect();
     missing.sort_unstable();
     missing.dedup();

@@ -120,6 +120,6 @@ fn ranked<'a>(words: impl Iterator<Item = &'a str>) -> Vec<Count> {
     }
     let mut list: Vec<Count> =
         counts.into_iter().map(|(what, count)| Count { what: what.to_string(), count }).collect();
-    list.sort_by(|a, b| b.count.cmp(&a.count));
+    list.sort_by_key(|entry| std::cmp::Reverse(entry.count));
     list
 }

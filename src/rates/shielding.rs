@@ -92,7 +92,8 @@ pub fn n2(n2_column: f64, h2_column: f64) -> f64 {
 /// the index of the left node (0 is none) and the share of the right one.
 fn locate(axis: &[f64], column: f64) -> (usize, f64) {
     let last = axis.len() - 1;
-    if !(column > 0.0) {
+    // A column that is not a number shields nothing; conditions are checked first.
+    if column.is_nan() || column <= 0.0 {
         return (0, 0.0);
     }
     let log = libm::log10(column);
@@ -110,13 +111,16 @@ fn locate(axis: &[f64], column: f64) -> (usize, f64) {
 mod tests {
     use super::*;
 
+    /// A shielding function of one column and its name.
+    type Named = (&'static str, fn(f64) -> f64);
+
     fn columns() -> impl Iterator<Item = f64> {
         std::iter::once(0.0).chain((0..560).map(|i| 10f64.powf(f64::from(i) * 0.05)))
     }
 
     #[test]
     fn shielding_is_one_without_a_column_and_never_rises() {
-        let functions: [(&str, fn(f64) -> f64); 6] = [
+        let functions: [Named; 6] = [
             ("H2", |n| h2(n, 1.0)),
             ("H2, broad lines", |n| h2(n, 10.0)),
             ("CO by CO", |n| co(n, 0.0)),

@@ -3,7 +3,7 @@
 use crate::diagnostic::Finding;
 use crate::network::{Network, Reaction, Row};
 
-use super::{AuditOptions, factor_between, factor_text, of_row};
+use super::{AuditOptions, factor_between, factor_text, is_nothing, number_text, of_row};
 
 /// A stretch that no row covers, and the row and edge that are held there.
 struct Stretch<'a> {
@@ -33,18 +33,23 @@ pub(super) fn check(network: &Network, options: &AuditOptions, findings: &mut Ve
             else {
                 continue;
             };
+            if is_nothing(reaction, kept) && is_nothing(reaction, continued) {
+                continue;
+            }
             let factor = factor_between(kept, continued);
             if factor < options.range_factor || worst.as_ref().is_some_and(|(f, ..)| *f >= factor) {
                 continue;
             }
             let message = format!(
-                "{}: no row covers {} to {} K; held at {} K it is {kept:.1e}, the formula \
-                 continued to {} K gives {continued:.1e}, {} apart",
+                "{}: no row covers {} to {} K; held at {} K it is {}, the formula \
+                 continued to {} K gives {}, {} apart",
                 reaction.equation,
                 s.low,
                 s.high,
                 s.edge,
+                number_text(kept),
                 s.far,
+                number_text(continued),
                 factor_text(factor)
             );
             worst = Some((factor, message, s.row));
@@ -60,7 +65,7 @@ pub(super) fn check(network: &Network, options: &AuditOptions, findings: &mut Ve
     if mild > 0 {
         let message = format!(
             "{short} of {} reactions do not cover {} to {} K; in {mild} of them it makes less \
-             than {} whether the edge is held or the formula continued",
+             than {} (or nothing) whether the edge is held or the formula continued",
             network.reactions.len(),
             options.coldest,
             options.hottest,

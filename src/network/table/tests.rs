@@ -4,7 +4,9 @@ use proptest::prelude::*;
 
 use super::*;
 
-fn cells(text: &str) -> (Vec<Vec<(String, u32, u32)>>, usize) {
+type Plain = (String, u32, u32);
+
+fn cells(text: &str) -> (Vec<Vec<Plain>>, usize) {
     let mut findings = Vec::new();
     let records = split("t", text, &mut findings);
     let plain = |record: Vec<Cell>| {

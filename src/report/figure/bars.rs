@@ -2,7 +2,7 @@
 
 use super::palette::{GRID, INK, LABEL_SIZE, NOTE_SIZE, SOFT};
 use super::rich::Rich;
-use super::sheet::{MARGIN, Sheet};
+use super::sheet::{self, MARGIN, Sheet};
 use super::svg::{Anchor, Look, Stroke, Svg};
 
 /// One bar.
@@ -79,7 +79,7 @@ struct Columns {
 impl BarChart {
     /// Draws the chart.
     pub fn to_svg(&self) -> String {
-        let width = self.width.max(360.0);
+        let width = sheet::side(self.width, 360.0);
         let sheet = Sheet::new(width, &self.title, &self.subtitle, &self.notes);
         let room = sheet.room();
         let rows = self.groups.iter().map(|g| g.rows.len()).sum::<usize>() as f64;

@@ -53,6 +53,16 @@ pub(super) struct Rect {
 }
 
 impl Rect {
+    /// The rectangle without a rim of the given width.
+    pub(super) fn inset(&self, rim: f64) -> Self {
+        Self {
+            left: self.left + rim,
+            top: self.top + rim,
+            right: self.right - rim,
+            bottom: self.bottom - rim,
+        }
+    }
+
     /// Whether two rectangles share some area.
     pub(super) fn overlaps(&self, other: &Self) -> bool {
         self.left < other.right
@@ -137,12 +147,16 @@ pub(super) fn beside(
     let step = (line.len() / 40).max(1);
     let mut best: Option<(f64, Rect)> = None;
     for &(x, y) in line.iter().rev().step_by(step) {
+        let (behind, above) = (-width, -height);
         let offsets = [
-            (5.0, -height / 2.0),
-            (4.0, -height - 3.0),
-            (-width / 2.0, -height - 4.0),
-            (-width / 2.0, 4.0),
-            (-width - 5.0, -height / 2.0),
+            (5.0, above / 2.0),
+            (3.0, above - 2.0),
+            (3.0, 2.0),
+            (behind / 2.0, above - 4.0),
+            (behind / 2.0, 4.0),
+            (behind - 2.0, above - 2.0),
+            (behind - 2.0, 3.0),
+            (behind - 5.0, above / 2.0),
         ];
         for (dx, dy) in offsets {
             let place =
@@ -156,11 +170,78 @@ pub(super) fn beside(
                 .count();
             let clashes = taken.iter().filter(|t| t.overlaps(&place)).count();
             let away = (x - end.0).abs() + (y - end.1).abs();
-            let cost = 60.0 * crossings as f64 + 1000.0 * clashes as f64 + away;
+            let cost = 150.0 * crossings as f64 + 1000.0 * clashes as f64 + away;
             if best.is_none_or(|(least, _)| cost < least) {
                 best = Some((cost, place));
             }
         }
     }
     best.map(|(_, place)| place)
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn labels_with_room_stay_where_they_are_wanted() {
+        assert_eq!(spread(&[10.0, 50.0, 90.0], 15.0, 0.0, 100.0), [10.0, 50.0, 90.0]);
+    }
+
+    #[test]
+    fn crowded_labels_move_apart_evenly_and_keep_their_order() {
+        assert_eq!(spread(&[50.0, 50.0], 10.0, 0.0, 100.0), [45.0, 55.0]);
+        assert_eq!(spread(&[99.0, 98.0, 10.0], 10.0, 0.0, 100.0), [100.0, 90.0, 10.0]);
+    }
+
+    #[test]
+    fn labels_never_overlap_nor_leave_their_space() {
+        // Pseudo-random wishes from a linear congruence.
+        let mut state = 1_u32;
+        for n in 1..30 {
+            let wanted: Vec<f64> = (0..n)
+                .map(|_| {
+                    state = state.wrapping_mul(1_664_525).wrapping_add(1_013_904_223);
+                    f64::from(state >> 16) / 200.0 - 20.0
+                })
+                .collect();
+            let mut placed = spread(&wanted, 9.0, 0.0, 200.0);
+            assert!(placed.iter().all(|p| (-1e-9..=200.0 + 1e-9).contains(p)), "{placed:?}");
+            placed.sort_by(f64::total_cmp);
+            let due = 9.0_f64.min(200.0 / (n.max(2) - 1) as f64) - 1e-9;
+            assert!(placed.windows(2).all(|w| w[1] - w[0] >= due), "{placed:?}");
+        }
+    }
+
+    #[test]
+    fn impossible_wishes_are_survived() {
+        assert!(spread(&[], 10.0, 0.0, 100.0).is_empty());
+        let placed = spread(&[f64::NAN, f64::INFINITY, 3.0], 10.0, 50.0, 0.0);
+        assert!(placed.iter().all(|p| p.is_finite()));
+    }
+
+    #[test]
+    fn lines_are_cut_at_the_frame() {
+        let frame = Rect { left: 0.0, top: 0.0, right: 10.0, bottom: 10.0 };
+        let line = [(-5.0, 5.0), (5.0, 5.0), (5.0, 15.0), (8.0, 15.0), (8.0, 5.0)];
+        let pieces = frame.clip_line(&line);
+        assert_eq!(
+            pieces,
+            [vec![(0.0, 5.0), (5.0, 5.0), (5.0, 10.0)], vec![(8.0, 10.0), (8.0, 5.0)]]
+        );
+        assert_eq!(frame.clip_line(&[(3.0, 3.0)]), [vec![(3.0, 3.0)]]);
+        assert!(frame.clip_line(&[(30.0, 3.0)]).is_empty());
+        assert!(frame.clip_line(&[]).is_empty());
+    }
+
+    #[test]
+    fn a_label_on_a_line_keeps_clear_of_the_others() {
+        let frame = Rect { left: 0.0, top: 0.0, right: 200.0, bottom: 100.0 };
+        let line = vec![(10.0, 50.0), (60.0, 50.0)];
+        let wall = vec![(70.0, 0.0), (70.0, 100.0)];
+        let place = beside(&line, (30.0, 12.0), &frame, &[line.clone(), wall], &[]).unwrap();
+        assert!(place.right < 70.0 && (place.bottom < 50.0 || place.top > 50.0), "{place:?}");
+        assert!(beside(&line, (300.0, 12.0), &frame, &[], &[]).is_none());
+        assert!(beside(&[], (30.0, 12.0), &frame, &[], &[]).is_none());
+    }
 }

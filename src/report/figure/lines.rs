@@ -5,7 +5,7 @@ use super::labels::{Rect, beside, spread};
 use super::palette::{self, LABEL_SIZE};
 use super::rich::Rich;
 use super::scale::{Axis, Scale};
-use super::sheet::{MARGIN, Sheet};
+use super::sheet::{self, MARGIN, Sheet};
 use super::svg::{Look, Stroke, Svg};
 
 /// One curve.
@@ -59,7 +59,7 @@ impl Default for LineChart {
 }
 
 /// Length of the piece of line between the frame and a label.
-const LEADER: f64 = 26.0;
+const LEADER: f64 = 36.0;
 /// Widest label in the margin.
 const LABEL_LIMIT: f64 = 170.0;
 /// Least distance between labels.
@@ -68,7 +68,7 @@ const LABEL_GAP: f64 = 15.5;
 impl LineChart {
     /// Draws the chart.
     pub fn to_svg(&self) -> String {
-        let (width, height) = (self.width.max(320.0), self.height.max(240.0));
+        let (width, height) = (sheet::side(self.width, 320.0), sheet::side(self.height, 240.0));
         let x = Scale::new(
             &self.x,
             self.series.iter().flat_map(|s| s.points.iter().map(|p| p.0)),
@@ -91,7 +91,7 @@ impl LineChart {
         let mut notes = self.notes.clone();
         let hidden = self.hidden(&x, &y);
         if !hidden.is_empty() {
-            notes.push(format!("Outside the frame: {}.", hidden.join(", ")));
+            notes.push(format!("Not in the frame: {}.", hidden.join(", ")));
         }
         let sheet = Sheet::new(width, &self.title, &self.subtitle, &notes);
         let room = sheet.room();
@@ -123,7 +123,7 @@ impl LineChart {
         format!("Curves of {} against {}: {}.", label(&self.y), label(&self.x), names.join(", "))
     }
 
-    /// Names, marked up, of the curves that have data but none in the frame.
+    /// Names, marked up, of the curves that cannot be seen.
     fn hidden(&self, x: &Scale, y: &Scale) -> Vec<String> {
         let unit = Rect { left: 0.0, top: -1.0, right: 1.0, bottom: 0.0 };
         let frame = Frame { area: unit, x: *x, y: *y };
@@ -174,7 +174,7 @@ fn draw_labels(svg: &mut Svg, frame: &Frame, names: &[Rich], lines: &[Vec<Vec<(f
     for ((&i, from), to) in outer.iter().zip(&wanted).zip(&placed) {
         let (colour, text, dash) = palette::line(i);
         let x = area.right + 4.0;
-        let bend = x + LEADER - 12.0;
+        let bend = x + 12.0;
         svg.path(
             &[(area.right, *from), (x, *from), (bend, *to), (x + LEADER - 4.0, *to)],
             Stroke { colour, width: 1.4, dash },
@@ -183,11 +183,12 @@ fn draw_labels(svg: &mut Svg, frame: &Frame, names: &[Rich], lines: &[Vec<Vec<(f
         svg.text((x + LEADER, to + 4.5 * crowded), &names[i], look);
     }
     let all: Vec<Vec<(f64, f64)>> = lines.iter().flatten().cloned().collect();
+    let inner = area.inset(9.0);
     let mut taken: Vec<Rect> = Vec::new();
     for i in (0..names.len()).filter(|i| !reaches(i)) {
         let Some(line) = lines[i].last() else { continue };
         let size = (names[i].width(LABEL_SIZE) + 2.0, LABEL_SIZE + 1.0);
-        let Some(place) = beside(line, size, area, &all, &taken) else { continue };
+        let Some(place) = beside(line, size, &inner, &all, &taken) else { continue };
         let look = Look { halo: true, ..Look::new(LABEL_SIZE).filled(palette::line(i).1) };
         svg.text((place.left + 1.0, place.bottom - 3.0), &names[i], look);
         taken.push(place);

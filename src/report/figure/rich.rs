@@ -228,3 +228,68 @@ fn glyph_width(g: &Glyph) -> f64 {
     let scale = if g.shift == Shift::Base { 1.0 } else { SMALL };
     f64::from(thousandths) / 1000.0 * scale
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    /// Shifts as signs: `.` on the line, `v` lowered, `^` raised.
+    fn shown(rich: &Rich) -> (String, String) {
+        let sign = |g: &Glyph| match g.shift {
+            Shift::Base => '.',
+            Shift::Sub => 'v',
+            Shift::Super => '^',
+        };
+        (rich.to_plain(), rich.glyphs.iter().map(sign).collect())
+    }
+
+    #[test]
+    fn formulas_are_set_as_chemists_do() {
+        let cases = [
+            ("H3O+", "H3O+", ".v.^"),
+            ("e-", "e\u{2212}", ".^"),
+            ("C10H8", "C10H8", ".vv.v"),
+            ("c-C3H2", "c-C3H2", "...v.v"),
+            ("He++", "He2+", "..^^"),
+            ("H2O(ice)", "H2O(ice)", ".v......"),
+            ("grain-", "grain\u{2212}", ".....^"),
+            ("HCO+ + e- -> CO + H", "HCO+ + e\u{2212} \u{2192} CO + H", "...^....^........."),
+        ];
+        for (text, characters, shifts) in cases {
+            assert_eq!(shown(&Rich::chemical(text)), (characters.into(), shifts.into()), "{text}");
+        }
+    }
+
+    #[test]
+    fn words_that_are_no_formulas_are_left_alone() {
+        for text in
+            ["photon", "2", "run-2", "everything else", "model2", "a+b", "", "+", "-", "X-ray"]
+        {
+            let (characters, shifts) = shown(&Rich::chemical(text));
+            assert_eq!(characters, text);
+            assert!(shifts.chars().all(|c| c == '.'), "{text}");
+        }
+    }
+
+    #[test]
+    fn marks_are_read_and_lone_ones_are_kept() {
+        let rich = Rich::marked("*n*_{H} / cm^{-3} of `H2`");
+        assert_eq!(shown(&rich), ("nH / cm\u{2212}3 of H2".into(), ".v.....^^.....v".into()));
+        assert!(rich.glyphs[0].italic && !rich.glyphs[1].italic);
+        for text in ["a * b * c", "x_1 ^2", "`open", "^{open", "**"] {
+            assert_eq!(Rich::marked(text).to_plain(), text);
+        }
+    }
+
+    #[test]
+    fn text_is_cut_and_wrapped_to_a_width() {
+        let rich = Rich::plain("several words in a row");
+        assert_eq!(rich.fit(1e3, 10.0), rich);
+        let cut = rich.fit(50.0, 10.0);
+        assert!(cut.width(10.0) <= 50.0 && cut.to_plain().ends_with('\u{2026}'));
+        let lines =
+            Rich::plain("several words in a row unpronounceablelonglonglong").wrap(60.0, 10.0);
+        assert!(lines.len() > 2 && lines.iter().all(|l| l.width(10.0) <= 60.0));
+        assert!(Rich::plain("").wrap(60.0, 10.0).is_empty());
+    }
+}

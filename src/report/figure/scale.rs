@@ -230,7 +230,7 @@ fn round_out_log(low: f64, high: f64) -> (f64, f64) {
 }
 
 fn round_out_linear(low: f64, high: f64) -> (f64, f64) {
-    let (step, _) = nice_step((high - low) / 5.0);
+    let (step, _) = nice_step((high - low) / 8.0);
     let (l, h) = ((low / step).floor() * step, (high / step).ceil() * step);
     if l.is_finite() && h.is_finite() && l < h { (l, h) } else { (low, high) }
 }

@@ -5,7 +5,7 @@ use super::labels::{Rect, spread};
 use super::palette::{self, INK, LABEL_SIZE, REST, SOFT};
 use super::rich::{Rich, Shift};
 use super::scale::{Axis, Scale};
-use super::sheet::{MARGIN, Sheet};
+use super::sheet::{self, MARGIN, Sheet};
 use super::stack::{Band, Stack};
 use super::svg::{Anchor, Look, Stroke, Svg};
 
@@ -83,7 +83,7 @@ const HEADING: f64 = 28.0;
 impl StackedShares {
     /// Draws the chart.
     pub fn to_svg(&self) -> String {
-        let width = self.width.max(420.0);
+        let width = sheet::side(self.width, 420.0);
         let sheet = Sheet::new(width, &self.title, &self.subtitle, &self.notes);
         let room = sheet.room();
         let x = Scale::new(&self.x, self.times.iter().copied(), false);
@@ -92,7 +92,7 @@ impl StackedShares {
 
         let panels = self.panels.len().max(1) as f64;
         let fixed = room.top + room.bottom + FOOT - TICK_FOOT + panels * (HEADING + TICK_FOOT);
-        let tall = ((self.height - fixed) / panels).max(90.0);
+        let tall = ((sheet::side(self.height, 240.0) - fixed) / panels).max(90.0);
         let left = MARGIN + LABEL_SIZE + 12.0 + tick_width(&y, tall);
         let names = self
             .panels
@@ -175,11 +175,11 @@ impl StackedShares {
 fn draw_inside(svg: &mut Svg, band: &Band, name: &str, number: Option<usize>) {
     let text = Rich::chemical(name);
     let look = Look::new(ENTRY_SIZE).anchored(Anchor::Middle);
-    let whole = band.roomiest(text.width(ENTRY_SIZE) + 10.0, 17.0);
+    let whole = band.roomiest(text.width(ENTRY_SIZE) + 26.0, 17.0);
     if let Some((x, y)) = whole {
         svg.text((x, y + 4.0), &text, look.filled(if number.is_some() { INK } else { SOFT }));
     } else if let Some(number) = number
-        && let Some((x, y)) = band.roomiest(12.0, 12.5)
+        && let Some((x, y)) = band.roomiest(30.0, 12.5)
     {
         svg.text((x, y + 4.0), &Rich::plain(&number.to_string()), Look { bold: true, ..look });
     }

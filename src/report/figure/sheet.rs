@@ -7,6 +7,11 @@ use super::svg::{Look, Svg};
 /// Outer margin on all sides.
 pub(super) const MARGIN: f64 = 16.0;
 
+/// A side as asked for, within reason.
+pub(super) fn side(wanted: f64, least: f64) -> f64 {
+    if wanted.is_finite() { wanted.clamp(least, 1e4) } else { least }
+}
+
 /// Texts around a chart, broken into lines for a width.
 #[derive(Debug)]
 pub(super) struct Sheet {
@@ -42,7 +47,7 @@ impl Sheet {
         let head = lines(self.title.len(), TITLE_SIZE) + lines(self.subtitle.len(), SUBTITLE_SIZE);
         let foot = lines(self.notes.len(), NOTE_SIZE);
         Room {
-            top: MARGIN + if head > 0.0 { head + 10.0 } else { 0.0 },
+            top: MARGIN + if head > 0.0 { head + 14.0 } else { 0.0 },
             bottom: MARGIN + if foot > 0.0 { foot + 10.0 } else { 0.0 },
         }
     }

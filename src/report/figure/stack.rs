@@ -176,3 +176,56 @@ fn between(a: &Cut, b: &Cut, x: f64) -> Cut {
     let edges = a.edges.iter().zip(&b.edges).map(|(p, q)| p + t * (q - p)).collect();
     Cut { x, edges }
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    const AREA: Rect = Rect { left: 0.0, top: 0.0, right: 100.0, bottom: 100.0 };
+
+    fn stack(places: &[f64], shares: &[&[f64]]) -> Stack {
+        let places: Vec<Option<f64>> = places.iter().map(|x| Some(*x)).collect();
+        Stack::new(&places, shares, &AREA)
+    }
+
+    #[test]
+    fn layers_rest_on_each_other_and_the_last_fills_up() {
+        let s = stack(&[0.0, 100.0], &[&[0.5, 0.25], &[0.25, 0.5]]);
+        assert_eq!(s.bands[0].pieces[0].cuts, [(0.0, 50.0, 100.0), (100.0, 75.0, 100.0)]);
+        assert_eq!(s.bands[1].pieces[0].cuts, [(0.0, 25.0, 50.0), (100.0, 25.0, 75.0)]);
+        assert_eq!(s.bands[2].pieces[0].cuts, [(0.0, 0.0, 25.0), (100.0, 0.0, 25.0)]);
+        assert!(!s.rest_is_nothing);
+    }
+
+    #[test]
+    fn too_much_is_scaled_down_and_less_than_nothing_is_nothing() {
+        let s = stack(&[0.0, 100.0], &[&[3.0, 1.0], &[1.0, -1.0]]);
+        assert_eq!(s.bands[0].pieces[0].cuts, [(0.0, 25.0, 100.0), (100.0, 0.0, 100.0)]);
+        assert!(s.rest_is_nothing);
+    }
+
+    #[test]
+    fn gaps_part_a_band_and_the_frame_cuts_it() {
+        let s = stack(&[-50.0, 50.0, 60.0, 70.0, 150.0], &[&[0.0, 1.0, f64::NAN, 1.0, 0.0]]);
+        let pieces = &s.bands[0].pieces;
+        assert_eq!(pieces.len(), 2);
+        assert_eq!(pieces[0].cuts, [(0.0, 50.0, 100.0), (50.0, 0.0, 100.0)]);
+        assert_eq!(pieces[1].cuts[1], (100.0, 37.5, 100.0));
+    }
+
+    #[test]
+    fn missing_shares_and_lone_times_are_survived() {
+        assert!(stack(&[0.0, 1.0], &[&[]]).bands[0].pieces.is_empty());
+        assert!(stack(&[], &[]).bands[0].pieces.is_empty());
+        let lone = stack(&[50.0], &[&[0.5]]);
+        assert_eq!(lone.bands[0].pieces[0].cuts, [(42.0, 50.0, 100.0), (58.0, 50.0, 100.0)]);
+    }
+
+    #[test]
+    fn text_goes_where_a_band_is_thick() {
+        let s = stack(&[0.0, 40.0, 60.0, 100.0], &[&[0.1, 0.1, 0.8, 0.8]]);
+        let (x, y) = s.bands[0].roomiest(30.0, 20.0).unwrap();
+        assert!((75.0..=85.0).contains(&x) && (55.0..65.0).contains(&y), "{x} {y}");
+        assert!(s.bands[0].roomiest(90.0, 20.0).is_none());
+    }
+}

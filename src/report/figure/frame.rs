@@ -3,14 +3,14 @@
 use super::labels::Rect;
 use super::palette::{GRID, INK, LABEL_SIZE, TICK_SIZE};
 use super::rich::Rich;
-use super::scale::{Scale, Tick};
+use super::scale::{Scale, Spacing, Tick};
 use super::svg::{Anchor, Look, Stroke, Svg};
 
 /// Height of tick labels and axis label below a frame.
-pub(super) const FOOT: f64 = 44.0;
+pub(super) const FOOT: f64 = 46.0;
 
 /// Space for tick labels alone.
-pub(super) const TICK_FOOT: f64 = 18.0;
+pub(super) const TICK_FOOT: f64 = 20.0;
 
 /// A plot area with its two scales.
 #[derive(Debug)]
@@ -76,7 +76,7 @@ impl Frame {
             let half = label.width(TICK_SIZE) / 2.0;
             if x - half > free_from {
                 svg.text(
-                    (x, a.bottom + 16.0),
+                    (x, a.bottom + 18.0),
                     &label,
                     Look::new(TICK_SIZE).anchored(Anchor::Middle),
                 );
@@ -127,5 +127,5 @@ pub(super) fn tick_width(y: &Scale, height: f64) -> f64 {
 }
 
 fn y_ticks(y: &Scale, height: f64) -> Vec<Tick> {
-    y.ticks(height, 26.0)
+    y.ticks(height, if y.spacing() == Spacing::Log { 26.0 } else { 40.0 })
 }

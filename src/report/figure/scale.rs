@@ -103,6 +103,11 @@ impl Scale {
         Self { spacing, low, high }
     }
 
+    /// Linear or logarithmic.
+    pub(super) fn spacing(&self) -> Spacing {
+        self.spacing
+    }
+
     /// Position of a value along the axis, within 0..1 when it is in range.
     pub(super) fn position(&self, value: f64) -> Option<f64> {
         let inner = match self.spacing {
@@ -125,6 +130,15 @@ impl Scale {
         };
         ticks.retain(|t| (-1e-9..=1.0 + 1e-9).contains(&t.at));
         ticks.sort_by(|a, b| a.at.total_cmp(&b.at));
+        // Multiples within a decade crowd towards its end.
+        let mut free_from = f64::NEG_INFINITY;
+        for tick in ticks.iter_mut().filter(|t| t.label.is_some()) {
+            if tick.at < free_from {
+                tick.label = None;
+            } else {
+                free_from = tick.at + 0.55 * gap / length.max(1.0);
+            }
+        }
         ticks
     }
 
@@ -180,9 +194,9 @@ impl Scale {
             return ticks;
         }
         // Little more than a decade: name some multiples too.
-        for mantissas in [&[1, 2, 5][..], &[1, 2, 3, 4, 5, 6, 7, 8, 9][..]] {
+        for (mantissas, least) in [(&[1, 2, 5][..], 3), (&[1, 2, 3, 4, 5, 6, 7, 8, 9][..], 2)] {
             let named = all(mantissas);
-            if named.len() >= 2 {
+            if named.len() >= least {
                 let plain = named.iter().all(|(_, e)| (-2..=3).contains(e));
                 let mut ticks: Vec<Tick> =
                     named.iter().map(|(m, e)| tick((*m, *e), Some(power(*m, *e, plain)))).collect();

@@ -135,6 +135,12 @@ impl StackedShares {
         let shares: Vec<&[f64]> = panel.layers.iter().map(|l| l.shares.as_slice()).collect();
         let stack = Stack::new(&places, &shares, area);
 
+        if stack.is_empty() {
+            let middle = ((area.left + area.right) / 2.0, (area.top + area.bottom) / 2.0);
+            let look = Look::new(ENTRY_SIZE).anchored(Anchor::Middle).filled(SOFT);
+            svg.text(middle, &Rich::plain("nothing to show"), look);
+            return;
+        }
         let mut entries = Vec::new();
         for (i, band) in stack.bands.iter().enumerate() {
             let layer = panel.layers.get(i);

@@ -99,6 +99,11 @@ pub(super) struct Stack {
 }
 
 impl Stack {
+    /// Whether there is nothing to draw.
+    pub(super) fn is_empty(&self) -> bool {
+        self.bands.iter().all(|band| band.pieces.is_empty())
+    }
+
     /// Stacks shares given at positions on paper (nothing: no place).
     pub(super) fn new(places: &[Option<f64>], shares: &[&[f64]], area: &Rect) -> Self {
         let layers = shares.len();

@@ -44,6 +44,11 @@ fn many_decades_are_thinned_and_few_are_written_out() {
 fn short_logarithmic_axes_name_multiples() {
     let s = scale(Axis::log("x").between(1e4, 6e4), &[], false);
     assert_eq!(words(&s.ticks(300.0, 26.0)), "104 2\u{d7}104 5\u{d7}104");
+    let s = scale(Axis::log("x").between(5e-5, 1e-4), &[], false);
+    let some = "5\u{d7}10-5 6\u{d7}10-5 7\u{d7}10-5 8\u{d7}10-5 9\u{d7}10-5 10-4";
+    assert_eq!(words(&s.ticks(300.0, 26.0)), some);
+    let s = scale(Axis::log("x").between(2.1, 10.0), &[], false);
+    assert_eq!(words(&s.ticks(100.0, 26.0)), "3 4 6 8", "labels keep apart");
     let s = scale(Axis::log("x").between(2.2, 2.6), &[], false);
     assert!(words(&s.ticks(300.0, 26.0)).starts_with("2.2 2.3 2.4"));
 }

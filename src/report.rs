@@ -3,5 +3,6 @@
 //! Plain values come in, text goes out; nothing here knows a network, prints or
 //! touches files.
 
+pub mod figure;
 pub mod table;
 pub mod text;

@@ -103,7 +103,7 @@ fn line(model: &Model, channel: &Channel, net: bool) -> ChannelLine {
 }
 
 /// What drives a reaction that its equation does not show.
-fn law_mark(law: &str) -> &'static str {
+pub(super) fn law_mark(law: &str) -> &'static str {
     match law {
         "cosmic_ray" => " [cosmic rays]",
         "cosmic_ray_photon" => " [secondary photons]",

@@ -26,7 +26,8 @@ fn cost(filled: &[Vec<u32>], start: usize) -> u64 {
     };
     let (all, leading): (Vec<u64>, Vec<u64>) =
         (0..start).map(|k| (right_of(k, n), right_of(k, start))).unzip();
-    let pivots = |i: usize| filled[i].iter().map(|&k| k as usize).filter(move |&k| k < start.min(i));
+    let pivots =
+        |i: usize| filled[i].iter().map(|&k| k as usize).filter(move |&k| k < start.min(i));
     let indexed: u64 = (0..start).flat_map(&pivots).map(|k| all[k]).sum::<u64>()
         + (start..n).flat_map(&pivots).map(|k| leading[k]).sum::<u64>();
     let mut tiled = 0;

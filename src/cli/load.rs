@@ -22,7 +22,9 @@ pub(super) fn model(arguments: &RunArguments, output: &mut Output) -> Result<Mod
     let (run, findings) = RunFile::read(&name, &text, &arguments.set)?;
     output.findings(&findings);
     let network = network_of_run(&run, folder.as_deref(), output)?;
-    Ok(Model::new(Arc::new(network), run)?)
+    let model = Model::new(Arc::new(network), run)?;
+    output.findings(&model.warnings);
+    Ok(model)
 }
 
 /// The text of a run: its name in findings, its content, and the folder that

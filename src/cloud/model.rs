@@ -25,6 +25,8 @@ pub struct Model {
     pub start: Vec<f64>,
     /// The watched species, as indices.
     pub watch: Vec<usize>,
+    /// What deserves a word although the model runs.
+    pub warnings: Vec<Finding>,
 }
 
 impl Model {
@@ -35,7 +37,8 @@ impl Model {
     /// species that it lacks, conditions that a rate law cannot take.
     pub fn new(network: Arc<Network>, run: RunFile) -> Result<Self, Vec<Finding>> {
         let mut findings = Vec::new();
-        let start = start::abundances(&run, &network).unwrap_or_else(|found| {
+        let mut warnings = Vec::new();
+        let start = start::abundances(&run, &network, &mut warnings).unwrap_or_else(|found| {
             findings.extend(found);
             Vec::new()
         });
@@ -62,7 +65,7 @@ impl Model {
             watch = ["OH", "H2O"].iter().filter_map(|name| network.species_index(name)).collect();
         }
         let kinetics = Arc::new(Kinetics::new(&Mechanism::from(&*network)));
-        Ok(Self { network, kinetics, run, coefficients, start, watch })
+        Ok(Self { network, kinetics, run, coefficients, start, watch, warnings })
     }
 
     /// The terms' coefficients for the engine.

@@ -3,6 +3,7 @@
 use super::runfile::{RunFile, unknown_species};
 use crate::diagnostic::Finding;
 use crate::network::Network;
+use crate::species::Species;
 use crate::units;
 
 /// Relative mismatch of charge or hydrogen that is taken for rounding of the
@@ -16,20 +17,41 @@ const MASS_PER_HYDROGEN_U: f64 = 1.4;
 
 /// Abundances n(X)/n_H by species, electrons and grains filled in.
 ///
+/// A species of an element that the network leaves out altogether is left out
+/// too, with a warning, so that one run serves a network and its subsets.
+///
 /// # Errors
 /// Findings: unknown species, hydrogen that does not add up to one, charge
 /// that does not balance.
-pub(super) fn abundances(run: &RunFile, network: &Network) -> Result<Vec<f64>, Vec<Finding>> {
+pub(super) fn abundances(
+    run: &RunFile,
+    network: &Network,
+    warnings: &mut Vec<Finding>,
+) -> Result<Vec<f64>, Vec<Finding>> {
     let mut findings = Vec::new();
     let mut start = vec![0.0; network.species.len()];
+    let elements = network.elements();
     for (name, place, value) in &run.start {
         match network.species_index(name) {
             Some(index) => start[index] = *value,
-            None => findings.push(unknown_species(
-                name,
-                place.clone(),
-                network.species.iter().map(|s| s.name.as_str()),
-            )),
+            None => match absent_element(name, &elements) {
+                Some(element) => warnings.push(
+                    Finding::warning(
+                        "run-absent-element",
+                        place.clone(),
+                        format!(
+                            "network `{}` has no {element}: `{name}` is left out",
+                            network.name
+                        ),
+                    )
+                    .remedy("nothing, if the network is meant to do without it"),
+                ),
+                None => findings.push(unknown_species(
+                    name,
+                    place.clone(),
+                    network.species.iter().map(|s| s.name.as_str()),
+                )),
+            },
         }
     }
     if findings.is_empty() {
@@ -38,6 +60,12 @@ pub(super) fn abundances(run: &RunFile, network: &Network) -> Result<Vec<f64>, V
         fill_electrons(run, network, &mut start, &mut findings);
     }
     if findings.iter().any(Finding::is_error) { Err(findings) } else { Ok(start) }
+}
+
+/// An element of a well-formed species name that the network does not have.
+fn absent_element(name: &str, elements: &[String]) -> Option<String> {
+    let species = Species::new(name, None).ok()?;
+    species.atoms.into_iter().map(|(element, _)| element).find(|e| !elements.contains(e))
 }
 
 /// Grains per hydrogen nucleus: the dust mass in spheres of one radius.

@@ -208,6 +208,12 @@ pub const CODES: &[(&str, &str)] = &[
         "A run file or an option names a species that its network does not have.",
     ),
     (
+        "run-absent-element",
+        "The start names a species of an element that the network leaves out \
+         altogether. The species is left out, so that a run serves a network and its \
+         subsets alike.",
+    ),
+    (
         "run-hydrogen",
         "The start abundances do not hold one hydrogen nucleus per hydrogen nucleus. They \
          are relative to n_H = n(H) + 2 n(H2) + ..., so that all hydrogen in molecules is \

@@ -92,57 +92,95 @@ impl Symbolic {
     /// Eliminates the trailing columns of a block of rows, tile by tile.
     #[inline(always)]
     fn trailing_part<L: Lane>(&self, first: usize, shared: &[u32], factors: &mut Factors<L>) {
-        let Factors { inverse_diagonal, panel, multipliers, .. } = factors;
         let m = self.trailing();
-        let mut diagonal = [[L::zero(); TILE]; TILE];
         for column in (0..m).step_by(TILE) {
             let pivot = self.trailing + column;
-            let mut tile = load(panel, first, m, column);
+            // The long sum by itself, so that it stays in registers.
+            let Factors { panel, multipliers, .. } = &mut *factors;
+            let mut sums = load(panel, first, m, column);
             for &k in shared {
-                add_product(&mut tile, multipliers, panel, k as usize, m, column);
+                sums = plus_product(sums, multipliers, panel, k as usize, m, column);
             }
             for k in self.trailing..pivot.min(first) {
-                add_product(&mut tile, multipliers, panel, k, m, column);
+                sums = plus_product(sums, multipliers, panel, k, m, column);
             }
+            store(panel, first, m, column, &sums);
             if pivot < first {
-                // Left of the diagonal: multipliers.
-                for c in 0..TILE {
-                    let right = row_of(panel, pivot + c, m, column);
-                    for r in 0..TILE {
-                        let multiplier = tile[r][c] * inverse_diagonal[pivot + c];
-                        tile[r][c] = multiplier;
-                        multipliers[(pivot + c) * TILE + r] = -multiplier;
-                        for d in c + 1..TILE {
-                            tile[r][d] = (-multiplier).mul_add(right[d], tile[r][d]);
-                        }
-                    }
-                }
+                left_tile(first, pivot, column, m, factors);
             } else if pivot == first {
-                for c in 0..TILE {
-                    inverse_diagonal[pivot + c] = L::splat(1.0) / tile[c][c];
-                    for r in c + 1..TILE {
-                        let multiplier = tile[r][c] * inverse_diagonal[pivot + c];
-                        tile[r][c] = multiplier;
-                        for d in c + 1..TILE {
-                            tile[r][d] = (-multiplier).mul_add(tile[c][d], tile[r][d]);
-                        }
-                    }
-                }
-                diagonal = tile;
+                diagonal_tile(first, column, m, factors);
             } else {
-                for c in 0..TILE {
-                    for r in c + 1..TILE {
-                        let minus = -diagonal[r][c];
-                        for d in 0..TILE {
-                            tile[r][d] = minus.mul_add(tile[c][d], tile[r][d]);
-                        }
-                    }
-                }
-            }
-            for (r, row) in tile.iter().enumerate() {
-                panel[(first + r) * m + column..][..TILE].copy_from_slice(row);
+                right_tile(first, first - self.trailing, column, m, panel);
             }
         }
+    }
+}
+
+/// Turns a tile left of the diagonal into multipliers, column by column.
+#[inline(always)]
+fn left_tile<L: Lane>(
+    first: usize,
+    pivot: usize,
+    column: usize,
+    m: usize,
+    factors: &mut Factors<L>,
+) {
+    let Factors { inverse_diagonal, panel, multipliers, .. } = factors;
+    let u0 = row_of(panel, pivot, m, column);
+    let u1 = row_of(panel, pivot + 1, m, column);
+    let u2 = row_of(panel, pivot + 2, m, column);
+    let inverse = row_of(inverse_diagonal, 0, 0, pivot);
+    for r in 0..TILE {
+        let [x0, x1, x2, x3] = row_of(panel, first + r, m, column);
+        let m0 = -(x0 * inverse[0]);
+        let m1 = -(m0.mul_add(u0[1], x1) * inverse[1]);
+        let m2 = -(m1.mul_add(u1[2], m0.mul_add(u0[2], x2)) * inverse[2]);
+        let x3 = m2.mul_add(u2[3], m1.mul_add(u1[3], m0.mul_add(u0[3], x3)));
+        let m3 = -(x3 * inverse[3]);
+        for (c, minus) in [m0, m1, m2, m3].into_iter().enumerate() {
+            multipliers[(pivot + c) * TILE + r] = minus;
+            panel[(first + r) * m + column + c] = -minus;
+        }
+    }
+}
+
+/// Factorizes a tile on the diagonal: U on and above it, multipliers below.
+#[inline(always)]
+fn diagonal_tile<L: Lane>(first: usize, column: usize, m: usize, factors: &mut Factors<L>) {
+    let Factors { inverse_diagonal, panel, .. } = factors;
+    let inverse = &mut inverse_diagonal[first..][..TILE];
+    for c in 0..TILE {
+        inverse[c] = L::splat(1.0) / panel[(first + c) * m + column + c];
+        for r in c + 1..TILE {
+            let multiplier = panel[(first + r) * m + column + c] * inverse[c];
+            panel[(first + r) * m + column + c] = multiplier;
+            for d in column + c + 1..column + TILE {
+                let upper = panel[(first + c) * m + d];
+                let entry = &mut panel[(first + r) * m + d];
+                *entry = (-multiplier).mul_add(upper, *entry);
+            }
+        }
+    }
+}
+
+/// Takes the multipliers of the diagonal tile off a tile right of it.
+#[inline(always)]
+fn right_tile<L: Lane>(first: usize, diagonal: usize, column: usize, m: usize, panel: &mut [L]) {
+    for r in 1..TILE {
+        let multipliers = row_of(panel, first + r, m, diagonal);
+        let mut row = row_of(panel, first + r, m, column);
+        for (c, &multiplier) in multipliers.iter().enumerate().take(r) {
+            row = plus_scaled(row, -multiplier, row_of(panel, first + c, m, column));
+        }
+        panel[(first + r) * m + column..][..TILE].copy_from_slice(&row);
+    }
+}
+
+/// Writes a tile into the panel.
+#[inline(always)]
+fn store<L: Lane>(panel: &mut [L], first: usize, m: usize, column: usize, tile: &Tile<L>) {
+    for (r, row) in tile.iter().enumerate() {
+        panel[(first + r) * m + column..][..TILE].copy_from_slice(row);
     }
 }
 
@@ -165,25 +203,41 @@ fn row_of<L: Lane>(panel: &[L], row: usize, m: usize, column: usize) -> [L; TILE
 
 #[inline(always)]
 fn load<L: Lane>(panel: &[L], first: usize, m: usize, column: usize) -> Tile<L> {
-    let row = |r| row_of(panel, first + r, m, column);
-    [row(0), row(1), row(2), row(3)]
+    [
+        row_of(panel, first, m, column),
+        row_of(panel, first + 1, m, column),
+        row_of(panel, first + 2, m, column),
+        row_of(panel, first + 3, m, column),
+    ]
 }
 
-/// Adds the (negated) multipliers of pivot `k` times its row of U.
+/// A tile plus the (negated) multipliers of pivot `k` times its row of U.
 #[inline(always)]
-fn add_product<L: Lane>(
-    tile: &mut Tile<L>,
+fn plus_product<L: Lane>(
+    tile: Tile<L>,
     multipliers: &[L],
     panel: &[L],
     k: usize,
     m: usize,
     column: usize,
-) {
-    let left = &multipliers[k * TILE..][..TILE];
+) -> Tile<L> {
+    let left = row_of(multipliers, k, TILE, 0);
     let right = row_of(panel, k, m, column);
-    for r in 0..TILE {
-        for c in 0..TILE {
-            tile[r][c] = left[r].mul_add(right[c], tile[r][c]);
-        }
-    }
+    [
+        plus_scaled(tile[0], left[0], right),
+        plus_scaled(tile[1], left[1], right),
+        plus_scaled(tile[2], left[2], right),
+        plus_scaled(tile[3], left[3], right),
+    ]
+}
+
+/// `row + factor * other`.
+#[inline(always)]
+fn plus_scaled<L: Lane>(row: [L; TILE], factor: L, other: [L; TILE]) -> [L; TILE] {
+    [
+        factor.mul_add(other[0], row[0]),
+        factor.mul_add(other[1], row[1]),
+        factor.mul_add(other[2], row[2]),
+        factor.mul_add(other[3], row[3]),
+    ]
 }

@@ -9,15 +9,20 @@ mod findings;
 mod load;
 mod output;
 
+mod channel_text;
 mod channels;
 mod check;
 mod evolve;
 mod explain;
+mod figures;
+mod header;
 mod rates;
 mod shipped;
+mod species;
 mod steady;
 
 use std::ffi::OsString;
+use std::io::Write;
 use std::process::ExitCode;
 
 use clap::Parser;
@@ -29,6 +34,18 @@ use output::Output;
 /// Runs the program with its arguments (the first is the program's name) and
 /// returns its exit code; see `docs/errors.md` for the codes.
 pub fn run(arguments: impl IntoIterator<Item = OsString>) -> ExitCode {
+    let arguments: Vec<OsString> = arguments.into_iter().collect();
+    // A panic has told its place already; say whose mistake it is.
+    std::panic::catch_unwind(|| run_verb(arguments)).unwrap_or_else(|_| {
+        let _ = writeln!(
+            anstream::stderr(),
+            "internal error: this is a mistake in duskwater; please report it with the command line"
+        );
+        Exit::Internal.into()
+    })
+}
+
+fn run_verb(arguments: Vec<OsString>) -> ExitCode {
     let arguments = match Arguments::try_parse_from(arguments) {
         Ok(arguments) => arguments,
         Err(error) => {

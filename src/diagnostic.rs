@@ -58,11 +58,7 @@ pub struct Place {
 impl Place {
     /// A place inside a file.
     pub fn new(file: impl Into<String>, line: u32, column: u32) -> Self {
-        Self {
-            file: file.into(),
-            line,
-            column,
-        }
+        Self { file: file.into(), line, column }
     }
 
     /// A file as a whole.
@@ -125,13 +121,7 @@ impl Finding {
         place: Place,
         message: impl Into<String>,
     ) -> Self {
-        Self {
-            severity,
-            code,
-            place,
-            message: message.into(),
-            remedy: String::new(),
-        }
+        Self { severity, code, place, message: message.into(), remedy: String::new() }
     }
 
     /// An error without a remedy.
@@ -207,22 +197,15 @@ mod tests {
         let text = "ab\n\u{b5}m x\n";
         for (offset, line, column) in [(0, 1, 1), (3, 2, 1), (5, 2, 2), (4, 2, 1), (99, 3, 1)] {
             let place = Place::of_offset("f", text, offset);
-            assert_eq!(
-                (place.line, place.column),
-                (line, column),
-                "offset {offset}"
-            );
+            assert_eq!((place.line, place.column), (line, column), "offset {offset}");
         }
     }
 
     #[test]
     fn a_finding_reads_as_one_line() {
-        let finding = Finding::error(
-            "network-number",
-            Place::new("r.csv", 2, 5),
-            "`x` is no number",
-        )
-        .remedy("write a number");
+        let finding =
+            Finding::error("network-number", Place::new("r.csv", 2, 5), "`x` is no number")
+                .remedy("write a number");
         assert_eq!(
             finding.to_string(),
             "error[network-number] r.csv:2:5: `x` is no number (write a number)"

@@ -25,7 +25,6 @@ pub use method::Method;
 pub use spectrum::{Spectrum, slowest_mode};
 pub use steady::{SteadyFailure, SteadyOptions, SteadyState, find_steady_state};
 
-
 use crate::sparse::{Lane, Symbolic};
 
 /// An autonomous system `dy/dt = f(y; parameters)` whose Jacobian has a fixed

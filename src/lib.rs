@@ -25,3 +25,7 @@ pub mod kinetics;
 pub mod cloud;
 
 pub mod analysis;
+
+pub mod report;
+
+pub mod cli;

@@ -1,2 +1,7 @@
 //! The `duskwater` program; everything it does lives in the library.
-fn main() {}
+
+use std::process::ExitCode;
+
+fn main() -> ExitCode {
+    duskwater::cli::run(std::env::args_os())
+}

@@ -111,11 +111,7 @@ pub struct Row {
 impl Row {
     /// The three numbers of the law.
     pub fn numbers(&self) -> Numbers {
-        Numbers {
-            alpha: self.alpha,
-            beta: self.beta,
-            gamma: self.gamma,
-        }
+        Numbers { alpha: self.alpha, beta: self.beta, gamma: self.gamma }
     }
 }
 
@@ -165,9 +161,7 @@ impl Network {
 
     /// Index of a reaction by its id, or by the id of one of its rows.
     pub fn reaction_index(&self, id: &str) -> Option<usize> {
-        self.reactions
-            .iter()
-            .position(|r| r.id == id || r.rows.iter().any(|row| row.id == id))
+        self.reactions.iter().position(|r| r.id == id || r.rows.iter().any(|row| row.id == id))
     }
 
     /// The source with a key.
@@ -177,20 +171,12 @@ impl Network {
 
     /// The reactants of a reaction, with repeats.
     pub fn reactants_of(&self, reaction: &Reaction) -> Vec<&Species> {
-        reaction
-            .reactants
-            .iter()
-            .map(|index| &self.species[*index])
-            .collect()
+        reaction.reactants.iter().map(|index| &self.species[*index]).collect()
     }
 
     /// The products of a reaction, with repeats.
     pub fn products_of(&self, reaction: &Reaction) -> Vec<&Species> {
-        reaction
-            .products
-            .iter()
-            .map(|index| &self.species[*index])
-            .collect()
+        reaction.products.iter().map(|index| &self.species[*index]).collect()
     }
 
     /// Elements present, sorted; dust counts as `grain`.
@@ -212,20 +198,13 @@ impl Network {
             .elements()
             .into_iter()
             .map(|name| {
-                let weights = self
-                    .species
-                    .iter()
-                    .map(|s| f64::from(s.count(&name)))
-                    .collect();
+                let weights = self.species.iter().map(|s| f64::from(s.count(&name))).collect();
                 Conserved { name, weights }
             })
             .collect();
         if self.species.iter().any(|s| s.charge != 0) {
             let weights = self.species.iter().map(|s| f64::from(s.charge)).collect();
-            sums.push(Conserved {
-                name: "charge".to_string(),
-                weights,
-            });
+            sums.push(Conserved { name: "charge".to_string(), weights });
         }
         sums
     }

@@ -80,9 +80,7 @@ impl RateError {
     pub fn remedy(&self) -> String {
         match self {
             Self::Shape { .. } => "choose the law that describes this process".to_string(),
-            Self::MissingData {
-                column, species, ..
-            } => {
+            Self::MissingData { column, species, .. } => {
                 format!("fill in {column} of {species} in species.csv, or use law `thermal`")
             }
             Self::NoConstants { .. } => format!(
@@ -97,22 +95,11 @@ impl std::fmt::Display for RateError {
     fn fmt(&self, f: &mut std::fmt::Formatter<'_>) -> std::fmt::Result {
         match self {
             Self::Shape { law, wanted } => write!(f, "law `{}` wants {wanted}", law.name()),
-            Self::MissingData {
-                law,
-                species,
-                column,
-            } => {
-                write!(
-                    f,
-                    "law `{}` needs {column} of {species}, which is not given",
-                    law.name()
-                )
+            Self::MissingData { law, species, column } => {
+                write!(f, "law `{}` needs {column} of {species}, which is not given", law.name())
             }
             Self::NoConstants { ion } => {
-                write!(
-                    f,
-                    "there are no effective dust recombination constants for {ion}"
-                )
+                write!(f, "there are no effective dust recombination constants for {ion}")
             }
         }
     }

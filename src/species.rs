@@ -70,10 +70,7 @@ impl Species {
 
     /// How many atoms of `element` it holds.
     pub fn count(&self, element: &str) -> u32 {
-        self.atoms
-            .iter()
-            .find(|(name, _)| name == element)
-            .map_or(0, |(_, count)| *count)
+        self.atoms.iter().find(|(name, _)| name == element).map_or(0, |(_, count)| *count)
     }
 
     /// Whether this is the electron: no atoms, charge -1.
@@ -141,12 +138,7 @@ mod tests {
         ];
         for (name, expected) in cases {
             let s = Species::new(name, None).unwrap();
-            let got = [
-                s.is_electron(),
-                s.is_ion(),
-                s.is_neutral_gas(),
-                s.is_grain(),
-            ];
+            let got = [s.is_electron(), s.is_ion(), s.is_neutral_gas(), s.is_grain()];
             assert_eq!(got, expected, "{name}");
         }
     }

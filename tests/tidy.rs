@@ -23,10 +23,7 @@ const ROOMS: &[(&str, &[&str])] = &[
         &["units", "diagnostic", "species", "rates", "network", "kinetics", "integrate", "cloud"],
     ),
     ("report", &["units", "analysis"]),
-    (
-        "cli",
-        &["units", "diagnostic", "species", "rates", "network", "cloud", "analysis", "report"],
-    ),
+    ("cli", &["units", "diagnostic", "species", "rates", "network", "cloud", "analysis", "report"]),
 ];
 
 /// Lines that a source file may have; it wants to be under 300.

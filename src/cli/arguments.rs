@@ -5,14 +5,19 @@ use clap::{Args, Parser, Subcommand, ValueEnum};
 /// Chemistry of interstellar clouds: abundances over time, steady states, and
 /// the reactions behind them.
 #[derive(Debug, Parser)]
-#[command(name = "duskwater", version, max_term_width = 100, after_help = "\
+#[command(
+    name = "duskwater",
+    version,
+    max_term_width = 100,
+    after_help = "\
 Examples:
   duskwater evolve dense-core                    abundances and channels of a cold core
   duskwater channels dense-core --species OH     what makes and destroys OH
   duskwater check cloud                          how far the shipped network can be trusted
   duskwater shipped --into my-cloud              copies of the shipped runs and networks
 
-Exit codes: 0 done; 1 done, with findings; 2 could not run; 3 internal error.")]
+Exit codes: 0 done; 1 done, with findings; 2 could not run; 3 internal error."
+)]
 pub(super) struct Arguments {
     #[command(subcommand)]
     pub(super) command: Command,

@@ -13,15 +13,17 @@ pub(super) enum Exit {
     WithFindings,
     /// 2: could not run: bad input or usage, or output that cannot be written.
     CouldNotRun,
+    /// 3: a mistake in the program.
+    Internal,
 }
 
 impl From<Exit> for ExitCode {
     fn from(exit: Exit) -> Self {
-        // 3 (internal error) is what a panic would give; see `main.rs`.
         Self::from(match exit {
             Exit::Done => 0,
             Exit::WithFindings => 1,
             Exit::CouldNotRun => 2,
+            Exit::Internal => 3,
         })
     }
 }

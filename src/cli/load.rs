@@ -87,24 +87,17 @@ fn network_of_run(
 
 /// A network by shipped name or folder; its warnings are left to `check`.
 pub(super) fn network(name: &str, output: &mut Output) -> Result<Network, Stop> {
-    Ok(loaded(name, output)?.network)
-}
-
-/// As [`network`], with what the loader remarked.
-pub(super) fn loaded(
-    name: &str,
-    output: &mut Output,
-) -> Result<crate::network::Loaded, Stop> {
     let texts = texts(name)?;
     for (file, content) in texts.files() {
         if let Ok(text) = std::str::from_utf8(content) {
             output.remember(&texts.label(file), text);
         }
     }
-    Ok(Network::from_texts(name, &texts)?)
+    Ok(Network::from_texts(name, &texts)?.network)
 }
 
-fn texts(name: &str) -> Result<NetworkTexts, Stop> {
+/// The files of a network.
+pub(super) fn texts(name: &str) -> Result<NetworkTexts, Stop> {
     let path = Path::new(name);
     if path.is_dir() {
         return folder_texts(path);

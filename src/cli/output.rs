@@ -58,9 +58,16 @@ impl Output {
         self.format == Format::Text
     }
 
-    /// Whether bars, symbols and colours may be used on standard output.
-    pub(super) fn colour(&self) -> bool {
-        anstream::AutoStream::choice(&io::stdout()) != anstream::ColorChoice::Never
+    /// Whether block symbols may be used on standard output: on a terminal that
+    /// speaks UTF-8 and is not told to stay plain.
+    pub(super) fn symbols(&self) -> bool {
+        let plain = std::env::var("TERM").is_ok_and(|term| term == "dumb");
+        let locale = ["LC_ALL", "LC_CTYPE", "LANG"]
+            .iter()
+            .find_map(|name| std::env::var(name).ok().filter(|value| !value.is_empty()));
+        let utf8 =
+            locale.is_some_and(|value| value.to_lowercase().replace('-', "").contains("utf8"));
+        !plain && utf8 && io::stdout().is_terminal()
     }
 
     /// Columns of text output.

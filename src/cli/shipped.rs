@@ -96,7 +96,9 @@ pub(super) fn write(path: &Path, content: &[u8]) -> Result<(), Stop> {
             Place::file(path.display().to_string()),
             format!("the file could not be written: {error}"),
         )
-        .remedy("check the folder, its permissions and the free space; nothing was left half-written")
+        .remedy(
+            "check the folder, its permissions and the free space; nothing was left half-written",
+        )
         .into()
     })
 }

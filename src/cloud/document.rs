@@ -131,10 +131,8 @@ fn table_value(table: &DeTable<'_>, at: &dyn Fn(usize) -> Place) -> Value {
         table
             .iter()
             .map(|(key, value)| {
-                let node = Node {
-                    place: at(value.span().start),
-                    value: value_of(value.get_ref(), at),
-                };
+                let node =
+                    Node { place: at(value.span().start), value: value_of(value.get_ref(), at) };
                 (key.get_ref().to_string(), at(key.span().start), node)
             })
             .collect(),
@@ -144,12 +142,9 @@ fn table_value(table: &DeTable<'_>, at: &dyn Fn(usize) -> Place) -> Value {
 fn value_of(value: &DeValue<'_>, at: &dyn Fn(usize) -> Place) -> Value {
     match value {
         DeValue::String(text) => Value::Text(text.to_string()),
-        DeValue::Integer(number) => {
-            i64::from_str_radix(number.as_str(), number.radix()).map_or(Value::Date, |n| Value::Number(n as f64))
-        }
-        DeValue::Float(number) => {
-            Value::Number(number.as_str().parse().unwrap_or(f64::NAN))
-        }
+        DeValue::Integer(number) => i64::from_str_radix(number.as_str(), number.radix())
+            .map_or(Value::Date, |n| Value::Number(n as f64)),
+        DeValue::Float(number) => Value::Number(number.as_str().parse().unwrap_or(f64::NAN)),
         DeValue::Boolean(flag) => Value::Flag(*flag),
         DeValue::Datetime(_) => Value::Date,
         DeValue::Array(list) => Value::List(

@@ -132,9 +132,8 @@ pub(super) fn conservation(
         .into_iter()
         .map(|sum| {
             let total = |x: &[f64]| -> f64 { sum.weights.iter().zip(x).map(|(w, x)| w * x).sum() };
-            let size = |x: &[f64]| -> f64 {
-                sum.weights.iter().zip(x).map(|(w, x)| (w * x).abs()).sum()
-            };
+            let size =
+                |x: &[f64]| -> f64 { sum.weights.iter().zip(x).map(|(w, x)| (w * x).abs()).sum() };
             let at_start = total(start);
             let residual = states
                 .iter()

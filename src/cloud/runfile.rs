@@ -76,8 +76,8 @@ fn read_root(name: &str, document: &Document, findings: &mut Vec<Finding>) -> Op
     let mut root = Section::open("", document.root(), findings)?;
     let title = text(&mut root, "title", findings).map_or_else(String::new, |t| t.0);
     let network = text(&mut root, "network", findings);
-    let extrapolate = text(&mut root, "extrapolate", findings).map(|(word, place)| {
-        match word.as_str() {
+    let extrapolate =
+        text(&mut root, "extrapolate", findings).map(|(word, place)| match word.as_str() {
             "hold" => Extrapolate::Hold,
             "formula" => Extrapolate::Formula,
             _ => {
@@ -87,8 +87,7 @@ fn read_root(name: &str, document: &Document, findings: &mut Vec<Finding>) -> Op
                 );
                 Extrapolate::Hold
             }
-        }
-    });
+        });
     let conditions = section(&mut root, "cloud", true, findings, read_cloud);
     let start = section(&mut root, "start", true, findings, read_start);
     let start_place = document_place(document, "start");
@@ -137,8 +136,12 @@ fn document_place(document: &Document, section: &str) -> Place {
 
 fn missing(section: &Section<'_>, key: &str, findings: &mut Vec<Finding>) {
     findings.push(
-        Finding::error("run-missing-key", section.place(), format!("`{}` is missing", section.path(key)))
-            .remedy("see docs/formats.md for the keys a run file needs"),
+        Finding::error(
+            "run-missing-key",
+            section.place(),
+            format!("`{}` is missing", section.path(key)),
+        )
+        .remedy("see docs/formats.md for the keys a run file needs"),
     );
 }
 
@@ -248,7 +251,13 @@ fn read_cloud(section: &mut Section<'_>, findings: &mut Vec<Finding>) -> Option<
     take(section, "gas_to_dust", D::Dimensionless, false, &mut c.gas_to_dust);
     take(section, "doppler_width", D::Speed, false, &mut c.doppler_width);
     take(section, "grain_radius", D::Length, false, &mut c.grain_radius);
-    take(section, "reference_electron_abundance", D::Dimensionless, false, &mut c.reference_electron_abundance);
+    take(
+        section,
+        "reference_electron_abundance",
+        D::Dimensionless,
+        false,
+        &mut c.reference_electron_abundance,
+    );
     for problem in c.validate() {
         let place = places
             .iter()
@@ -274,8 +283,12 @@ fn read_start(
         };
         if value < 0.0 {
             findings.push(
-                Finding::error("run-range", node.place.clone(), format!("`{path}` = {value} is negative"))
-                    .remedy("an abundance n(X)/n_H is zero or more"),
+                Finding::error(
+                    "run-range",
+                    node.place.clone(),
+                    format!("`{path}` = {value} is negative"),
+                )
+                .remedy("an abundance n(X)/n_H is zero or more"),
             );
             continue;
         }
@@ -289,8 +302,12 @@ fn read_times(section: &mut Section<'_>, findings: &mut Vec<Finding>) -> Option<
         let value = quantity(path, node, Dimension::Time, findings)?;
         if value < 0.0 {
             findings.push(
-                Finding::error("run-range", node.place.clone(), format!("`{path}` = {value} yr is negative"))
-                    .remedy("times count from the start of the run"),
+                Finding::error(
+                    "run-range",
+                    node.place.clone(),
+                    format!("`{path}` = {value} yr is negative"),
+                )
+                .remedy("times count from the start of the run"),
             );
             return None;
         }
@@ -306,8 +323,12 @@ fn read_times(section: &mut Section<'_>, findings: &mut Vec<Finding>) -> Option<
                 }
                 if output.windows(2).any(|pair| pair[0] >= pair[1]) {
                     findings.push(
-                        Finding::error("run-value", node.place.clone(), "`times.output` is not ascending")
-                            .remedy("list the times from early to late, each once"),
+                        Finding::error(
+                            "run-value",
+                            node.place.clone(),
+                            "`times.output` is not ascending",
+                        )
+                        .remedy("list the times from early to late, each once"),
                     );
                 }
             }
@@ -323,18 +344,27 @@ fn read_times(section: &mut Section<'_>, findings: &mut Vec<Finding>) -> Option<
         .and_then(|node| time(&section.path("from"), node, findings))
         .unwrap_or(1.0);
     let per_decade = section.take("per_decade").and_then(|node| {
-        let value = quantity(&section.path("per_decade"), node, Dimension::Dimensionless, findings)?;
+        let value =
+            quantity(&section.path("per_decade"), node, Dimension::Dimensionless, findings)?;
         let good = (1.0..=1000.0).contains(&value) && value.fract().abs() < 1e-12;
         if !good {
             findings.push(
-                Finding::error("run-range", node.place.clone(), format!("`times.per_decade` = {value}"))
-                    .remedy("give a whole number from 1 to 1000"),
+                Finding::error(
+                    "run-range",
+                    node.place.clone(),
+                    format!("`times.per_decade` = {value}"),
+                )
+                .remedy("give a whole number from 1 to 1000"),
             );
         }
         if list.is_some() {
             findings.push(
-                Finding::error("run-value", node.place.clone(), "both `times.output` and `times.per_decade` are given")
-                    .remedy("keep one of them"),
+                Finding::error(
+                    "run-value",
+                    node.place.clone(),
+                    "both `times.output` and `times.per_decade` are given",
+                )
+                .remedy("keep one of them"),
             );
         }
         good.then_some(value)
@@ -356,8 +386,12 @@ fn read_times(section: &mut Section<'_>, findings: &mut Vec<Finding>) -> Option<
     if let Some((end, place)) = until {
         if output.last().is_some_and(|&last| last > end) {
             findings.push(
-                Finding::error("run-value", place, format!("`times.until` = {end} yr is before the last output time"))
-                    .remedy("raise `until`, or drop the later output times"),
+                Finding::error(
+                    "run-value",
+                    place,
+                    format!("`times.until` = {end} yr is before the last output time"),
+                )
+                .remedy("raise `until`, or drop the later output times"),
             );
         }
         if output.last().is_none_or(|&last| last < end * (1.0 - 1e-12)) {
@@ -383,8 +417,12 @@ fn read_solver(section: &mut Section<'_>, findings: &mut Vec<Finding>) -> Option
             Some(value) if (low..=high).contains(&value) => value,
             Some(value) => {
                 findings.push(
-                    Finding::error("run-range", node.place.clone(), format!("`{path}` = {value:e} is outside {low:e} to {high:e}"))
-                        .remedy(format!("the default is {default:e}")),
+                    Finding::error(
+                        "run-range",
+                        node.place.clone(),
+                        format!("`{path}` = {value:e} is outside {low:e} to {high:e}"),
+                    )
+                    .remedy(format!("the default is {default:e}")),
                 );
                 default
             }

@@ -7,10 +7,8 @@ static RUNS: Dir<'_> = include_dir!("$CARGO_MANIFEST_DIR/runs");
 /// Names of the shipped runs, sorted.
 #[must_use]
 pub fn names() -> Vec<&'static str> {
-    let mut names: Vec<&str> = RUNS
-        .files()
-        .filter_map(|file| file.path().to_str()?.strip_suffix(".toml"))
-        .collect();
+    let mut names: Vec<&str> =
+        RUNS.files().filter_map(|file| file.path().to_str()?.strip_suffix(".toml")).collect();
     names.sort_unstable();
     names
 }

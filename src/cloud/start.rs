@@ -43,8 +43,7 @@ pub(super) fn abundances(run: &RunFile, network: &Network) -> Result<Vec<f64>, V
 /// Grains per hydrogen nucleus: the dust mass in spheres of one radius.
 fn grains_per_hydrogen(radius_um: f64, gas_to_dust: f64) -> f64 {
     let radius_cm = radius_um * 1e-4;
-    let grain_mass_g =
-        4.0 / 3.0 * std::f64::consts::PI * radius_cm.powi(3) * GRAIN_DENSITY_G_CM3;
+    let grain_mass_g = 4.0 / 3.0 * std::f64::consts::PI * radius_cm.powi(3) * GRAIN_DENSITY_G_CM3;
     MASS_PER_HYDROGEN_U * units::ATOMIC_MASS_G / gas_to_dust / grain_mass_g
 }
 
@@ -54,17 +53,11 @@ fn fill_grains(run: &RunFile, network: &Network, start: &mut [f64]) {
         && !given("grain")
         && !given("grain-")
     {
-        start[grain] =
-            grains_per_hydrogen(run.conditions.grain_radius, run.conditions.gas_to_dust);
+        start[grain] = grains_per_hydrogen(run.conditions.grain_radius, run.conditions.gas_to_dust);
     }
 }
 
-fn check_hydrogen(
-    run: &RunFile,
-    network: &Network,
-    start: &[f64],
-    findings: &mut Vec<Finding>,
-) {
+fn check_hydrogen(run: &RunFile, network: &Network, start: &[f64], findings: &mut Vec<Finding>) {
     let Some(hydrogen) = network.conserved().into_iter().find(|c| c.name == "H") else { return };
     let nuclei: f64 = hydrogen.weights.iter().zip(start).map(|(w, x)| w * x).sum();
     if (nuclei - 1.0).abs() > ROUNDING {
@@ -74,7 +67,9 @@ fn check_hydrogen(
                 run.start_place.clone(),
                 format!("the start holds {nuclei:.6} hydrogen nuclei per hydrogen nucleus"),
             )
-            .remedy("abundances are n(X)/n_H with n_H = n(H) + 2 n(H2) + ...: H2 = 0.5 is all of it"),
+            .remedy(
+                "abundances are n(X)/n_H with n_H = n(H) + 2 n(H2) + ...: H2 = 0.5 is all of it",
+            ),
         );
     }
 }
@@ -117,20 +112,15 @@ fn fill_electrons(
 pub(super) fn redistributed(network: &Network, start: &[f64], wanted: &[&str]) -> Option<Vec<f64>> {
     let conserved = network.conserved();
     let elements: Vec<_> = conserved.iter().filter(|c| c.name != "charge").collect();
-    let mut left: Vec<f64> = elements
-        .iter()
-        .map(|c| c.weights.iter().zip(start).map(|(w, x)| w * x).sum())
-        .collect();
+    let mut left: Vec<f64> =
+        elements.iter().map(|c| c.weights.iter().zip(start).map(|(w, x)| w * x).sum()).collect();
     let mut out = vec![0.0; start.len()];
     let atoms = (0..start.len()).filter(|&i| {
         let species = &network.species[i];
         species.charge == 0 && species.atoms.len() == 1 && species.atoms[0].1 == 1
     });
-    let order = wanted
-        .iter()
-        .chain(&["H2"])
-        .filter_map(|name| network.species_index(name))
-        .chain(atoms);
+    let order =
+        wanted.iter().chain(&["H2"]).filter_map(|name| network.species_index(name)).chain(atoms);
     for species in order {
         let amount = elements
             .iter()

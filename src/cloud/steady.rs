@@ -98,11 +98,7 @@ impl Model {
         })
     }
 
-    fn search(
-        &self,
-        options: &SteadyOptions,
-        start: &[f64],
-    ) -> Result<SteadyState, SteadyFailure> {
+    fn search(&self, options: &SteadyOptions, start: &[f64]) -> Result<SteadyState, SteadyFailure> {
         let parameters = self.parameters();
         let start = self.kinetics.to_unknowns(start);
         let kinetics = &*self.kinetics;

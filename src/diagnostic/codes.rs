@@ -35,14 +35,8 @@ pub const CODES: &[(&str, &str)] = &[
         "A line has more or fewer cells than the header. Most often a cell with a comma \
          is not in quotes.",
     ),
-    (
-        "network-quote",
-        "A quoted cell is not closed, or text follows its closing quote.",
-    ),
-    (
-        "network-toml",
-        "network.toml does not follow the TOML grammar.",
-    ),
+    ("network-quote", "A quoted cell is not closed, or text follows its closing quote."),
+    ("network-toml", "network.toml does not follow the TOML grammar."),
     (
         "network-key",
         "network.toml has an unknown key, a value of the wrong type, no title, or picks \
@@ -53,31 +47,13 @@ pub const CODES: &[(&str, &str)] = &[
         "The network named by `base` was not found, or networks build on one another in a \
          circle.",
     ),
-    (
-        "network-unknown-id",
-        "network.toml picks a reaction that its base does not have.",
-    ),
-    (
-        "network-elements",
-        "The `elements` of network.toml are not the elements of its species.",
-    ),
-    (
-        "network-source-row",
-        "A line of sources.csv lacks its key or citation.",
-    ),
-    (
-        "network-duplicate-source",
-        "Two lines of sources.csv have one key and different citations.",
-    ),
-    (
-        "network-unknown-source",
-        "A row names a source that sources.csv does not list.",
-    ),
+    ("network-unknown-id", "network.toml picks a reaction that its base does not have."),
+    ("network-elements", "The `elements` of network.toml are not the elements of its species."),
+    ("network-source-row", "A line of sources.csv lacks its key or citation."),
+    ("network-duplicate-source", "Two lines of sources.csv have one key and different citations."),
+    ("network-unknown-source", "A row names a source that sources.csv does not list."),
     ("network-duplicate-species", "A species is listed twice."),
-    (
-        "network-unknown-species",
-        "A species is used that species.csv does not list.",
-    ),
+    ("network-unknown-species", "A species is used that species.csv does not list."),
     ("network-id", "A row has no id, or its id holds blanks."),
     (
         "network-duplicate-id",
@@ -89,19 +65,10 @@ pub const CODES: &[(&str, &str)] = &[
         "An equation cannot be read. Species stand between ` + ` and ` -> `, with an \
          optional count before a name.",
     ),
-    (
-        "network-number",
-        "A cell that wants a finite number holds something else.",
-    ),
+    ("network-number", "A cell that wants a finite number holds something else."),
     ("network-negative", "A number that cannot be negative is."),
-    (
-        "network-range",
-        "The temperature range of a row is empty or reaches 0 K.",
-    ),
-    (
-        "network-uncertainty",
-        "The uncertainty is a factor F either way and at least 1.",
-    ),
+    ("network-range", "The temperature range of a row is empty or reaches 0 K."),
+    ("network-uncertainty", "The uncertainty is a factor F either way and at least 1."),
     ("network-law", "The law of a row is unknown."),
     (
         "network-law-not-built",
@@ -121,10 +88,7 @@ pub const CODES: &[(&str, &str)] = &[
         "The effective recombination on dust has constants for H+, He+, C+, Na+, Mg+, \
          Si+, S+ and Fe+ only.",
     ),
-    (
-        "network-unused-number",
-        "A row gives a number that its law does not use.",
-    ),
+    ("network-unused-number", "A row gives a number that its law does not use."),
     ("network-atoms", "An equation does not keep its atoms."),
     ("network-charge", "An equation does not keep its charge."),
     (
@@ -167,14 +131,11 @@ pub const CODES: &[(&str, &str)] = &[
         "Rows do not cover 5 to 3000 K. Outside, the nearest row is held at its nearest \
          edge; the message says how far that is from its formula continued.",
     ),
-    (
-        "audit-seam",
-        "The coefficient jumps where two rows meet, by more than a factor 1.5.",
-    ),
+    ("audit-seam", "The coefficient jumps where two rows meet, by more than a factor 1.5."),
     (
         "audit-too-fast",
         "A coefficient is larger than any collision of that kind: 1e-5 cm3 s-1 for two \
-         bodies with an electron, 1e-6 with an ion, 3e-9 for neutrals, 1e-25 cm6 s-1 for \
+         opposite charges, 1e-6 with an ion, 3e-9 for neutrals, 1e-25 cm6 s-1 for \
          three bodies.",
     ),
     (
@@ -196,10 +157,7 @@ pub const CODES: &[(&str, &str)] = &[
         "audit-low-barrier",
         "The barrier of an endothermic reaction is much smaller than the energy it takes.",
     ),
-    (
-        "audit-ion-barrier",
-        "A strongly exothermic reaction of an ion has a barrier, which is rare.",
-    ),
+    ("audit-ion-barrier", "A strongly exothermic reaction of an ion has a barrier, which is rare."),
     (
         "audit-neutral-barrier",
         "Exothermic reactions of neutrals that have a barrier; this is common.",
@@ -210,14 +168,8 @@ pub const CODES: &[(&str, &str)] = &[
          factor at 300 or 1000 K.",
     ),
     ("audit-never-used", "A species takes part in no reaction."),
-    (
-        "audit-never-made",
-        "Nothing makes a species at 10 K: it keeps at most its start abundance.",
-    ),
-    (
-        "audit-never-destroyed",
-        "Nothing destroys a species at 10 K: it piles up.",
-    ),
+    ("audit-never-made", "Nothing makes a species at 10 K: it keeps at most its start abundance."),
+    ("audit-never-destroyed", "Nothing destroys a species at 10 K: it piles up."),
     ("audit-no-source", "Rows without a source."),
     (
         "audit-provenance",
@@ -228,8 +180,5 @@ pub const CODES: &[(&str, &str)] = &[
 
 /// The explanation of a code, or none when the code is not ours.
 pub fn explain(code: &str) -> Option<&'static str> {
-    CODES
-        .iter()
-        .find(|(name, _)| *name == code)
-        .map(|(_, text)| *text)
+    CODES.iter().find(|(name, _)| *name == code).map(|(_, text)| *text)
 }

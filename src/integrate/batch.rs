@@ -61,8 +61,7 @@ pub fn integrate_all<L: Lane, S: System>(
             if state.solution.failure.is_none() {
                 state.solution.failure = trouble(&work, options, lane, state);
             }
-            if state.solution.failure.is_some()
-                || state.solution.states.len() == state.times.len()
+            if state.solution.failure.is_some() || state.solution.states.len() == state.times.len()
             {
                 if let Some(state) = slot.take() {
                     sink(state.solution);
@@ -123,8 +122,7 @@ fn first_step<L: Lane, S: System>(
     system.rate_of_change(&work.parameters, &work.y, &mut rate);
     let mut sum = 0.0;
     for (rate, y) in rate.iter().zip(&work.y) {
-        let scale =
-            options.absolute_tolerance + options.relative_tolerance * y.get(lane).abs();
+        let scale = options.absolute_tolerance + options.relative_tolerance * y.get(lane).abs();
         sum += (rate.get(lane) / scale).powi(2);
     }
     let speed = (sum / n as f64).sqrt();
@@ -171,8 +169,7 @@ fn finish_step<L: Lane, S: System>(
             break;
         }
         let x = (wanted - state.time) / step;
-        let values =
-            interpolate(options.method, x, lane, &work.y, &work.y_new, &work.stages);
+        let values = interpolate(options.method, x, lane, &work.y, &work.y_new, &work.stages);
         state.solution.states.push(on_sums(work, system, lane, &values));
     }
     state.time = end;
@@ -215,10 +212,5 @@ fn trouble<L: Lane>(
     } else {
         return None;
     };
-    Some(Failure {
-        time: state.time,
-        step: state.step,
-        unknown: work.worst(options, lane),
-        cause,
-    })
+    Some(Failure { time: state.time, step: state.step, unknown: work.worst(options, lane), cause })
 }

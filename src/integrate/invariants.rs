@@ -44,9 +44,8 @@ impl Invariants {
                 pairs.push((a, b, sparse(&product)));
             }
         }
-        let columns = (0..size)
-            .map(|i| sparse(&weights.iter().map(|row| row[i]).collect()))
-            .collect();
+        let columns =
+            (0..size).map(|i| sparse(&weights.iter().map(|row| row[i]).collect())).collect();
         Self { rows: weights.iter().map(sparse).collect(), columns, pairs }
     }
 
@@ -117,8 +116,7 @@ impl Invariants {
                 matrix[a][b] = value * inverse[b];
             }
             for c in 0..a {
-                matrix[a][a] =
-                    matrix[a][a] - matrix[a][c] * matrix[a][c] * matrix[c][c];
+                matrix[a][a] = matrix[a][a] - matrix[a][c] * matrix[a][c] * matrix[c][c];
             }
             matrix[a][a] = matrix[a][a].max(tiny);
             inverse[a] = L::splat(1.0) / matrix[a][a];

@@ -83,8 +83,15 @@ pub fn find_steady_state<L: Lane, S: System>(
         let carriers = carriers(system, &y, options.floor);
         let newton = dt > 1e22;
         let inverse_dt = if newton { 0.0 } else { 1.0 / dt };
-        let Some(d) = increment::<L, S>(system, &parameters, &y, &targets, &carriers, inverse_dt, options.floor)
-        else {
+        let Some(d) = increment::<L, S>(
+            system,
+            &parameters,
+            &y,
+            &targets,
+            &carriers,
+            inverse_dt,
+            options.floor,
+        ) else {
             dt *= 0.1;
             continue;
         };

@@ -87,11 +87,7 @@ fn errors_with_equal_steps(method: &'static Method, steps: u32) -> (f64, f64) {
     };
     let kinetics = Kinetics::new(&Mechanism {
         species: 3,
-        reactions: vec![
-            reaction(&[0, 0], &[2]),
-            reaction(&[0], &[1]),
-            reaction(&[1], &[0]),
-        ],
+        reactions: vec![reaction(&[0, 0], &[2]), reaction(&[0], &[1]), reaction(&[1], &[0])],
         conserved: vec![vec![1.0, 1.0, 2.0]],
     });
     let options = options(method, 1e-8);
@@ -119,9 +115,8 @@ fn errors_with_equal_steps(method: &'static Method, steps: u32) -> (f64, f64) {
         work.y = work.y_new.clone();
     }
     let end: Vec<f64> = work.y.iter().map(|v| v.get(0)).collect();
-    let distance = |a: &[f64], b: &[f64]| {
-        a.iter().zip(b).map(|(a, b)| (a - b).abs()).fold(0.0, f64::max)
-    };
+    let distance =
+        |a: &[f64], b: &[f64]| a.iter().zip(b).map(|(a, b)| (a - b).abs()).fold(0.0, f64::max);
     (distance(&end, &reference(1.0)), distance(&inside, &reference(1.0 - 0.5 * h)))
 }
 
@@ -130,7 +125,9 @@ fn every_method_and_its_interpolant_have_the_published_order() {
     // Orders as published: RODAS 5(4) order 5, interpolant 4; RODAS 4(3) order
     // 4, interpolant 3. A wrong digit in a coefficient shows as a lower order.
     // The interpolant's error over one step is of one order more.
-    for (method, order, inside_order) in [(Method::rodas5(), 5.0, 5.0), (Method::rodas4(), 4.0, 4.0)] {
+    for (method, order, inside_order) in
+        [(Method::rodas5(), 5.0, 5.0), (Method::rodas4(), 4.0, 4.0)]
+    {
         let (coarse, coarse_inside) = errors_with_equal_steps(method, 10);
         let (fine, fine_inside) = errors_with_equal_steps(method, 20);
         let seen = (coarse / fine).log2();

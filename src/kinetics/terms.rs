@@ -96,7 +96,8 @@ impl Program {
         }
         let c = std::mem::take(&mut self.current);
         let (coefficient, _) = self.starts[self.counts.len()];
-        self.starts.push((coefficient + c.linear + c.own + c.product + c.triple, self.factors.len()));
+        self.starts
+            .push((coefficient + c.linear + c.own + c.product + c.triple, self.factors.len()));
         self.counts.push(c);
     }
 

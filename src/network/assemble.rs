@@ -54,12 +54,7 @@ pub(super) fn reactions(
     let mut by_key: BTreeMap<Key, usize> = BTreeMap::new();
     let mut by_id: BTreeMap<String, (usize, Place)> = BTreeMap::new();
     for entry in entries {
-        let Entry {
-            equation,
-            reactants,
-            products,
-            row,
-        } = entry;
+        let Entry { equation, reactants, products, row } = entry;
         check_row(&row, &equation, &reactants, &products, species, findings);
         let key = (sorted(&reactants), sorted(&products), row.law.axis());
         let index = *by_key.entry(key).or_insert(reactions.len());
@@ -80,14 +75,7 @@ pub(super) fn reactions(
             let depends_on = depends_on(row.law, &reactants, &products, species);
             let id = row.id.clone();
             let rows = vec![row];
-            reactions.push(Reaction {
-                id,
-                equation,
-                reactants,
-                products,
-                depends_on,
-                rows,
-            });
+            reactions.push(Reaction { id, equation, reactants, products, depends_on, rows });
         } else {
             reactions[index].rows.push(row);
         }
@@ -113,14 +101,8 @@ fn depends_on(
     species: &[Species],
 ) -> Vec<usize> {
     let (left, right) = (picked(reactants, species), picked(products, species));
-    let participants = Participants {
-        reactants: &left,
-        products: &right,
-    };
-    law.depends_on(participants)
-        .into_iter()
-        .map(|at| reactants[at])
-        .collect()
+    let participants = Participants { reactants: &left, products: &right };
+    law.depends_on(participants).into_iter().map(|at| reactants[at]).collect()
 }
 
 /// The law must fit the species, and numbers it does not use should be zero.
@@ -133,22 +115,12 @@ fn check_row(
     findings: &mut Vec<Finding>,
 ) {
     let (left, right) = (picked(reactants, species), picked(products, species));
-    let participants = Participants {
-        reactants: &left,
-        products: &right,
-    };
+    let participants = Participants { reactants: &left, products: &right };
     let conditions = Conditions::default();
-    if let Err(error) = row
-        .law
-        .coefficient(row.numbers(), participants, &conditions, row.t_max)
-    {
+    if let Err(error) = row.law.coefficient(row.numbers(), participants, &conditions, row.t_max) {
         findings.push(
-            Finding::error(
-                error.code(),
-                row.place.clone(),
-                format!("{equation}: {error}"),
-            )
-            .remedy(error.remedy()),
+            Finding::error(error.code(), row.place.clone(), format!("{equation}: {error}"))
+                .remedy(error.remedy()),
         );
     }
     let numbers = [("beta", row.beta), ("gamma", row.gamma)];
@@ -194,19 +166,16 @@ pub(super) fn check_dust_schemes(
     let on_dust = |reaction: &&Reaction| reaction.law() == Law::DustRecombination;
     let explicit = |reaction: &&Reaction| reaction.reactants.iter().any(|i| species[*i].is_grain());
     let with_grains = reactions.iter().filter(on_dust).find(explicit);
-    let effective = reactions
-        .iter()
-        .filter(on_dust)
-        .find(|reaction| !explicit(reaction));
+    let effective = reactions.iter().filter(on_dust).find(|reaction| !explicit(reaction));
     if let (Some(a), Some(b)) = (with_grains, effective) {
         let message = format!(
             "two ways of recombining on dust are mixed: grains ({}, at {}) and the effective \
              form ({})",
             a.equation, a.rows[0].place, b.equation
         );
-        findings.push(
-            Finding::error("network-mixed-dust", b.rows[0].place.clone(), message)
-                .remedy("keep the effective rows for diffuse gas, or the grain rows for dense gas"),
-        );
+        findings
+            .push(Finding::error("network-mixed-dust", b.rows[0].place.clone(), message).remedy(
+                "keep the effective rows for diffuse gas, or the grain rows for dense gas",
+            ));
     }
 }

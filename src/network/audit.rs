@@ -85,26 +85,18 @@ pub fn audit(network: &Network, options: &AuditOptions) -> Vec<Finding> {
 /// [`Conditions::default`] at another temperature, dust being as warm as the
 /// gas up to 100 K.
 fn conditions_at(temperature: f64) -> Conditions {
-    Conditions {
-        temperature,
-        dust_temperature: temperature.min(100.0),
-        ..Conditions::default()
-    }
+    Conditions { temperature, dust_temperature: temperature.min(100.0), ..Conditions::default() }
 }
 
 /// The coefficient at a temperature (K), held at edges; none when it cannot be
 /// computed, which other checks report.
 fn held(network: &Network, reaction: &Reaction, temperature: f64) -> Option<f64> {
-    network
-        .coefficient(reaction, &conditions_at(temperature), Extrapolate::Hold)
-        .ok()
+    network.coefficient(reaction, &conditions_at(temperature), Extrapolate::Hold).ok()
 }
 
 /// The coefficient of one row at a temperature (K), whatever its range.
 fn of_row(network: &Network, reaction: &Reaction, row: &Row, temperature: f64) -> Option<f64> {
-    network
-        .row_coefficient(reaction, row, &conditions_at(temperature), temperature)
-        .ok()
+    network.row_coefficient(reaction, row, &conditions_at(temperature), temperature).ok()
 }
 
 /// Temperatures from `low` to `high`, evenly spaced in the logarithm.
@@ -120,10 +112,7 @@ fn place_of(reaction: &Reaction) -> Place {
 
 /// A file of the network beside the one that holds its rows.
 fn file_beside(network: &Network, file: &str) -> Place {
-    let rows = network
-        .reactions
-        .first()
-        .map_or("", |r| r.rows[0].place.file.as_str());
+    let rows = network.reactions.first().map_or("", |r| r.rows[0].place.file.as_str());
     match rows.rsplit_once('/') {
         Some((folder, _)) => Place::file(format!("{folder}/{file}")),
         None => Place::file(file),
@@ -143,15 +132,26 @@ fn factor_between(a: f64, b: f64) -> f64 {
     }
 }
 
-/// A factor for people: one digit after the point, or a power of ten.
+/// A factor for people.
 fn factor_text(factor: f64) -> String {
     if factor < 1e3 {
         format!("a factor {factor:.1}")
-    } else if factor < 1e300 {
-        format!("a factor 1e{:.0}", libm::log10(factor))
+    } else if factor < 1e6 {
+        format!("a factor {factor:.0e}")
     } else {
-        "an unbounded factor".to_string()
+        "more than a factor 1e6".to_string()
     }
+}
+
+/// A coefficient for people: two digits, or 0.
+fn number_text(value: f64) -> String {
+    if value > 0.0 { format!("{value:.1e}") } else { "0".to_string() }
+}
+
+/// Whether a coefficient does nothing in a cloud's life: below 1e-22 s^-1 or
+/// cm^3 s^-1 (once in 3e10 yr at 1e4 cm^-3), 1e-36 cm^6 s^-1. Our choice.
+fn is_nothing(reaction: &Reaction, value: f64) -> bool {
+    value < if reaction.depends_on.len() > 2 { 1e-36 } else { 1e-22 }
 }
 
 #[cfg(test)]

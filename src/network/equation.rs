@@ -21,10 +21,7 @@ const MOST: usize = 12;
 impl Equation {
     /// Reads an equation.
     pub(super) fn parse(text: &str) -> Result<Self, EquationError> {
-        let error = |offset, message: &str| EquationError {
-            offset,
-            message: message.to_string(),
-        };
+        let error = |offset, message: &str| EquationError { offset, message: message.to_string() };
         let words = words(text);
         let arrows: Vec<usize> = (0..words.len()).filter(|at| words[*at].0 == "->").collect();
         match arrows.as_slice() {
@@ -44,10 +41,7 @@ impl Equation {
     /// The canonical text: names with single blanks, repeats written out.
     pub(super) fn canonical(&self) -> String {
         let join = |side: &[(String, usize)]| {
-            side.iter()
-                .map(|(name, _)| name.as_str())
-                .collect::<Vec<_>>()
-                .join(" + ")
+            side.iter().map(|(name, _)| name.as_str()).collect::<Vec<_>>().join(" + ")
         };
         format!("{} -> {}", join(&self.reactants), join(&self.products))
     }

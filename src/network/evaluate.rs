@@ -43,9 +43,7 @@ impl Reaction {
 
     /// Whether a row covers a temperature (K).
     pub fn covers(&self, temperature: f64) -> bool {
-        self.rows
-            .iter()
-            .any(|row| row.t_min <= temperature && temperature <= row.t_max)
+        self.rows.iter().any(|row| row.t_min <= temperature && temperature <= row.t_max)
     }
 }
 
@@ -68,11 +66,7 @@ impl Network {
                 Err(finding) => findings.push(finding),
             }
         }
-        if findings.is_empty() {
-            Ok(values)
-        } else {
-            Err(findings)
-        }
+        if findings.is_empty() { Ok(values) } else { Err(findings) }
     }
 
     /// The coefficient of one reaction of this network.
@@ -106,24 +100,16 @@ impl Network {
     ) -> Result<f64, Finding> {
         let reactants = self.reactants_of(reaction);
         let products = self.products_of(reaction);
-        let participants = Participants {
-            reactants: &reactants,
-            products: &products,
-        };
-        match row
-            .law
-            .coefficient(row.numbers(), participants, conditions, temperature)
-        {
+        let participants = Participants { reactants: &reactants, products: &products };
+        match row.law.coefficient(row.numbers(), participants, conditions, temperature) {
             Ok(value) if value.is_finite() && value >= 0.0 => Ok(value),
             Ok(value) => {
                 let message = format!(
                     "{} has the coefficient {value:e} at {temperature} K",
                     reaction.equation
                 );
-                Err(
-                    Finding::error("network-coefficient", row.place.clone(), message)
-                        .remedy("correct the numbers of the row, or do not extrapolate"),
-                )
+                Err(Finding::error("network-coefficient", row.place.clone(), message)
+                    .remedy("correct the numbers of the row, or do not extrapolate"))
             }
             Err(error) => {
                 let message = format!("{}: {error}", reaction.equation);

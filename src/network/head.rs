@@ -26,16 +26,8 @@ pub(super) struct Head {
     pub(super) reactions: Option<Vec<Word>>,
 }
 
-const KEYS: [&str; 8] = [
-    "title",
-    "text",
-    "purpose",
-    "elements",
-    "base",
-    "species",
-    "without",
-    "reactions",
-];
+const KEYS: [&str; 8] =
+    ["title", "text", "purpose", "elements", "base", "species", "without", "reactions"];
 
 impl Head {
     /// Reads the file; what is wrong is added to `findings`.
@@ -83,15 +75,11 @@ impl Head {
                     .remedy("add a line title = \"...\""),
             );
         }
-        for (name, list) in [
-            ("species", &head.species),
-            ("without", &head.without),
-            ("reactions", &head.reactions),
-        ] {
+        for (name, list) in
+            [("species", &head.species), ("without", &head.without), ("reactions", &head.reactions)]
+        {
             if let (Some(list), None) = (list, &head.base) {
-                let place = list
-                    .first()
-                    .map_or_else(|| Place::file(file), |w| w.place.clone());
+                let place = list.first().map_or_else(|| Place::file(file), |w| w.place.clone());
                 let message = format!("`{name}` picks from a base network, and there is no `base`");
                 findings.push(
                     Finding::error("network-key", place, message).remedy("add base = \"NAME\""),
@@ -133,10 +121,7 @@ fn words(
     for item in items.iter() {
         let place = at(item.span());
         match item.get_ref().as_str() {
-            Some(text) => list.push(Word {
-                text: text.to_string(),
-                place,
-            }),
+            Some(text) => list.push(Word { text: text.to_string(), place }),
             None => findings.push(wrong_type(name, wanted, item.get_ref(), place)),
         }
     }

@@ -3,7 +3,7 @@
 use std::collections::BTreeMap;
 
 use crate::diagnostic::{self, Finding, Place, nearest};
-use crate::species::Species;
+use crate::species::{GRAIN, Species};
 
 use super::assemble::{self, Entry};
 use super::head::{Head, Word};
@@ -57,10 +57,9 @@ pub(super) fn from_texts(name: &str, texts: &NetworkTexts) -> Result<Loaded, Vec
     let network = read(name, texts, 0, &mut findings);
     diagnostic::sort(&mut findings);
     match network {
-        Some(network) if !findings.iter().any(Finding::is_error) => Ok(Loaded {
-            network,
-            warnings: findings,
-        }),
+        Some(network) if !findings.iter().any(Finding::is_error) => {
+            Ok(Loaded { network, warnings: findings })
+        }
         _ => Err(findings),
     }
 }
@@ -125,12 +124,8 @@ fn text_of(
     let Some(bytes) = texts.get(file) else {
         if needed {
             findings.push(
-                Finding::error(
-                    "network-missing-file",
-                    Place::file(label),
-                    "the file is missing",
-                )
-                .remedy(format!("a network folder holds {file}")),
+                Finding::error("network-missing-file", Place::file(label), "the file is missing")
+                    .remedy(format!("a network folder holds {file}")),
             );
         }
         return None;
@@ -186,11 +181,7 @@ fn pick(network: Network, head: &Head, findings: &mut Vec<Finding>) -> Network {
         return network;
     }
     let mut unknown = |word: &Word, what: &str, guess: Option<&str>| {
-        let code = if what == "species" {
-            "network-unknown-species"
-        } else {
-            "network-unknown-id"
-        };
+        let code = if what == "species" { "network-unknown-species" } else { "network-unknown-id" };
         let message = format!("the base network has no {what} `{}`", word.text);
         let remedy = match guess {
             Some(name) => format!("did you mean `{name}`?"),
@@ -217,10 +208,7 @@ fn pick(network: Network, head: &Head, findings: &mut Vec<Finding>) -> Network {
             match network.reaction_index(&word.text) {
                 Some(index) => found.push(index),
                 None => {
-                    let names = network
-                        .reactions
-                        .iter()
-                        .map(|reaction| reaction.id.as_str());
+                    let names = network.reactions.iter().map(|reaction| reaction.id.as_str());
                     unknown(word, "reaction", nearest(&word.text, names));
                 }
             }
@@ -266,21 +254,16 @@ fn check_elements(head: &Head, species: &[Species], findings: &mut Vec<Finding>)
             findings.push(finding.remedy("leave it out of elements"));
         }
     }
-    let place = claimed
-        .first()
-        .map_or_else(Place::default, |word| word.place.clone());
+    let place = claimed.first().map_or_else(Place::default, |word| word.place.clone());
     let mut missing: Vec<&str> = species
         .iter()
         .flat_map(|one| one.atoms.iter().map(|(element, _)| element.as_str()))
-        .filter(|element| !claimed.iter().any(|word| word.text == *element))
+        .filter(|element| *element != GRAIN && !claimed.iter().any(|word| word.text == *element))
         .collect();
     missing.sort_unstable();
     missing.dedup();
     if !missing.is_empty() {
-        let message = format!(
-            "species hold elements that are not claimed: {}",
-            missing.join(", ")
-        );
+        let message = format!("species hold elements that are not claimed: {}", missing.join(", "));
         let finding = Finding::warning("network-elements", place, message);
         findings.push(finding.remedy("add them to elements"));
     }

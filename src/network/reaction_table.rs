@@ -44,12 +44,7 @@ pub(super) fn read(
         let sides = read_equation(record, known, findings);
         let row = read_row(record, findings);
         if let (Some((equation, reactants, products)), Some(row)) = (sides, row) {
-            entries.push(Entry {
-                equation,
-                reactants,
-                products,
-                row,
-            });
+            entries.push(Entry { equation, reactants, products, row });
         }
     }
 }
@@ -123,12 +118,7 @@ fn read_row(record: Record<'_>, findings: &mut Vec<Finding>) -> Option<Row> {
     let uncertainty = read("uncertainty", None);
     if let Some(alpha) = alpha.filter(|alpha| *alpha < 0.0) {
         let message = format!("alpha is negative ({alpha:e})");
-        wrong(
-            "network-negative",
-            "alpha",
-            message,
-            "coefficients are not negative",
-        );
+        wrong("network-negative", "alpha", message, "coefficients are not negative");
     }
     if let Some(factor) = uncertainty.filter(|factor| *factor < 1.0) {
         let message = format!("uncertainty is {factor}, which is below 1");
@@ -137,12 +127,7 @@ fn read_row(record: Record<'_>, findings: &mut Vec<Finding>) -> Option<Row> {
     }
     if let Some(low) = t_min.filter(|low| *low <= 0.0) {
         let message = format!("t_min is {low} K");
-        wrong(
-            "network-range",
-            "t_min",
-            message,
-            "temperatures are above 0 K",
-        );
+        wrong("network-range", "t_min", message, "temperatures are above 0 K");
     } else if let (Some(low), Some(high)) = (t_min, t_max)
         && low >= high
     {
@@ -173,16 +158,12 @@ fn read_law(record: Record<'_>, findings: &mut Vec<Finding>) -> Option<Law> {
     };
     let names = || Law::ALL.iter().map(|law| law.name());
     let (code, remedy) = match &error {
-        LawNameError::NotYetBuilt(_) => (
-            "network-law-not-built",
-            "leave the row out for now".to_string(),
-        ),
+        LawNameError::NotYetBuilt(_) => {
+            ("network-law-not-built", "leave the row out for now".to_string())
+        }
         LawNameError::Unknown(word) => match nearest(word, names()) {
             Some(name) => ("network-law", format!("did you mean `{name}`?")),
-            None => (
-                "network-law",
-                format!("laws are {}", names().collect::<Vec<_>>().join(", ")),
-            ),
+            None => ("network-law", format!("laws are {}", names().collect::<Vec<_>>().join(", "))),
         },
     };
     findings.push(Finding::error(code, record.place("law"), error.to_string()).remedy(remedy));

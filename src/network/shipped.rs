@@ -13,11 +13,7 @@ static FOLDERS: Dir<'_> = include_dir!("$CARGO_MANIFEST_DIR/networks");
 pub fn names() -> Vec<&'static str> {
     let mut names: Vec<&str> = FOLDERS
         .dirs()
-        .filter(|folder| {
-            folder
-                .get_file(folder.path().join("network.toml"))
-                .is_some()
-        })
+        .filter(|folder| folder.get_file(folder.path().join("network.toml")).is_some())
         .filter_map(|folder| folder.path().to_str())
         .collect();
     names.sort_unstable();
@@ -53,9 +49,7 @@ pub fn load(name: &str) -> Result<Loaded, Vec<Finding>> {
                 None => format!("shipped networks are {}", names.join(", ")),
             };
             let message = format!("there is no shipped network `{name}`");
-            Err(vec![
-                Finding::error("network-base", Place::default(), message).remedy(remedy),
-            ])
+            Err(vec![Finding::error("network-base", Place::default(), message).remedy(remedy)])
         }
     }
 }

@@ -21,11 +21,8 @@ pub(super) fn read(file: &str, text: &str, sources: &mut Vec<Source>, findings: 
             );
             continue;
         }
-        let source = Source {
-            key: key.to_string(),
-            citation: citation.to_string(),
-            doi: doi.to_string(),
-        };
+        let source =
+            Source { key: key.to_string(), citation: citation.to_string(), doi: doi.to_string() };
         match sources.iter().find(|known| known.key == source.key) {
             // A network that builds on another may repeat its sources.
             Some(known) if known == &source => {}

@@ -80,11 +80,7 @@ fn read_one(record: Record<'_>, findings: &mut Vec<Finding>) -> Option<Species> 
             return None;
         }
     };
-    [
-        species.enthalpy_kj_mol,
-        species.polarizability_a3,
-        species.dipole_d,
-    ] = values;
+    [species.enthalpy_kj_mol, species.polarizability_a3, species.dipole_d] = values;
     species.source = record.text("source").to_string();
     species.provenance = record.text("provenance").to_string();
     species.note = record.text("note").to_string();

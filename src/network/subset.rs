@@ -47,22 +47,10 @@ impl Network {
             .collect();
         let cited = |key: &str| {
             species.iter().any(|one| one.source == key)
-                || reactions
-                    .iter()
-                    .any(|r| r.rows.iter().any(|row| row.source == key))
+                || reactions.iter().any(|r| r.rows.iter().any(|row| row.source == key))
         };
-        let sources = self
-            .sources
-            .iter()
-            .filter(|source| cited(&source.key))
-            .cloned()
-            .collect();
-        Self {
-            species,
-            reactions,
-            sources,
-            ..self.head_only()
-        }
+        let sources = self.sources.iter().filter(|source| cited(&source.key)).cloned().collect();
+        Self { species, reactions, sources, ..self.head_only() }
     }
 
     /// Name and words without contents.

@@ -58,14 +58,7 @@ const CLASSES: [(f64, &str); 5] = [
 /// Counts a network.
 pub fn summary(network: &Network) -> Summary {
     let rows: Vec<&Row> = network.reactions.iter().flat_map(|r| &r.rows).collect();
-    let kinds = [
-        "neutrals",
-        "cations",
-        "anions",
-        "electrons",
-        "ices",
-        "grains",
-    ];
+    let kinds = ["neutrals", "cations", "anions", "electrons", "ices", "grains"];
     let kind_of = |index: usize| {
         let species = &network.species[index];
         match species.phase {
@@ -83,18 +76,11 @@ pub fn summary(network: &Network) -> Summary {
     }
     let mut by_class = [0_usize; CLASSES.len() + 1];
     for row in &rows {
-        let class = CLASSES
-            .iter()
-            .position(|(high, _)| row.uncertainty <= *high);
+        let class = CLASSES.iter().position(|(high, _)| row.uncertainty <= *high);
         by_class[class.unwrap_or(CLASSES.len())] += 1;
     }
     let class_names = CLASSES.iter().map(|(_, name)| *name).chain(["above 10"]);
-    let warm = || {
-        network
-            .reactions
-            .iter()
-            .filter(|r| r.law().depends_on_temperature())
-    };
+    let warm = || network.reactions.iter().filter(|r| r.law().depends_on_temperature());
     let covered = |temperature: f64| warm().filter(|r| r.covers(temperature)).count();
     let law_count = |law: Law| network.reactions.iter().filter(|r| r.law() == law).count();
     Summary {
@@ -107,10 +93,7 @@ pub fn summary(network: &Network) -> Summary {
         rows_by_provenance: ranked(rows.iter().map(|row| row.provenance.as_str())),
         rows_by_uncertainty: named(class_names, by_class),
         covered_at: [10.0, 30.0, 100.0, 300.0, 1000.0, 3000.0]
-            .map(|t| Count {
-                what: format!("{t} K"),
-                count: covered(t),
-            })
+            .map(|t| Count { what: format!("{t} K"), count: covered(t) })
             .to_vec(),
         depend_on_temperature: warm().count(),
         sources: ranked(rows.iter().map(|row| row.source.as_str())),
@@ -125,10 +108,7 @@ fn named<'a>(
         .into_iter()
         .zip(counts)
         .filter(|(_, count)| *count > 0)
-        .map(|(what, count)| Count {
-            what: what.to_string(),
-            count,
-        })
+        .map(|(what, count)| Count { what: what.to_string(), count })
         .collect()
 }
 
@@ -136,17 +116,10 @@ fn named<'a>(
 fn ranked<'a>(words: impl Iterator<Item = &'a str>) -> Vec<Count> {
     let mut counts: BTreeMap<&str, usize> = BTreeMap::new();
     for word in words {
-        *counts
-            .entry(if word.is_empty() { "(none)" } else { word })
-            .or_default() += 1;
+        *counts.entry(if word.is_empty() { "(none)" } else { word }).or_default() += 1;
     }
-    let mut list: Vec<Count> = counts
-        .into_iter()
-        .map(|(what, count)| Count {
-            what: what.to_string(),
-            count,
-        })
-        .collect();
-    list.sort_by(|a, b| b.count.cmp(&a.count));
+    let mut list: Vec<Count> =
+        counts.into_iter().map(|(what, count)| Count { what: what.to_string(), count }).collect();
+    list.sort_by_key(|entry| std::cmp::Reverse(entry.count));
     list
 }

@@ -20,10 +20,7 @@ impl NetworkTexts {
     /// An empty folder; `folder` is put before file names in findings and may
     /// be empty.
     pub fn new(folder: impl Into<String>) -> Self {
-        Self {
-            folder: folder.into(),
-            ..Self::default()
-        }
+        Self { folder: folder.into(), ..Self::default() }
     }
 
     /// The same folder with one more file (or another content of that file).
@@ -46,9 +43,7 @@ impl NetworkTexts {
 
     /// Names and contents of the files, sorted by name.
     pub fn files(&self) -> impl Iterator<Item = (&str, &[u8])> {
-        self.files
-            .iter()
-            .map(|(name, content)| (name.as_str(), content.as_slice()))
+        self.files.iter().map(|(name, content)| (name.as_str(), content.as_slice()))
     }
 
     /// The content of a file.

@@ -16,20 +16,14 @@ impl Network {
 
     fn head_text(&self) -> String {
         let mut head = toml::Table::new();
-        for (key, value) in [
-            ("title", &self.title),
-            ("text", &self.text),
-            ("purpose", &self.purpose),
-        ] {
+        for (key, value) in
+            [("title", &self.title), ("text", &self.text), ("purpose", &self.purpose)]
+        {
             if !value.is_empty() {
                 head.insert(key.to_string(), toml::Value::String(value.clone()));
             }
         }
-        let elements = self
-            .elements()
-            .into_iter()
-            .map(toml::Value::String)
-            .collect();
+        let elements = self.elements().into_iter().map(toml::Value::String).collect();
         head.insert("elements".to_string(), toml::Value::Array(elements));
         head.to_string()
     }
@@ -45,11 +39,8 @@ impl Network {
             let composition = if said {
                 String::new()
             } else {
-                let parts: Vec<String> = species
-                    .atoms
-                    .iter()
-                    .map(|(name, count)| format!("{name}:{count}"))
-                    .collect();
+                let parts: Vec<String> =
+                    species.atoms.iter().map(|(name, count)| format!("{name}:{count}")).collect();
                 parts.join(" ")
             };
             let number = |value: Option<f64>| value.map_or_else(String::new, written);

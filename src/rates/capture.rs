@@ -34,11 +34,7 @@ pub fn langevin(polarizability: f64, reduced_mass: f64, charge: i32) -> f64 {
 /// # Source
 /// Su & Chesnavich 1982, J. Chem. Phys. 76, 5183. Provenance: memory.
 pub fn polar_factor(x: f64) -> f64 {
-    if x >= 2.0 {
-        0.4767 * x + 0.6200
-    } else {
-        (x + 0.5090) * (x + 0.5090) / 10.526 + 0.9754
-    }
+    if x >= 2.0 { 0.4767 * x + 0.6200 } else { (x + 0.5090) * (x + 0.5090) / 10.526 + 0.9754 }
 }
 
 /// Su & Chesnavich's x for a dipole (debye), a polarizability (cubic angstrom)
@@ -82,10 +78,7 @@ pub fn of_pair(a: &Species, b: &Species, temperature: f64) -> Result<f64, RateEr
         (false, true) if a.is_neutral_gas() => (b, a),
         _ => {
             let wanted = "an ion (not the electron) and a neutral of the gas".to_string();
-            return Err(RateError::Shape {
-                law: Law::Capture,
-                wanted,
-            });
+            return Err(RateError::Shape { law: Law::Capture, wanted });
         }
     };
     let missing = |species: &Species, column| RateError::MissingData {
@@ -95,18 +88,11 @@ pub fn of_pair(a: &Species, b: &Species, temperature: f64) -> Result<f64, RateEr
     };
     let ion_mass = ion.mass_u.ok_or_else(|| missing(ion, "the mass"))?;
     let neutral_mass = neutral.mass_u.ok_or_else(|| missing(neutral, "the mass"))?;
-    let polarizability = neutral
-        .polarizability_a3
-        .ok_or_else(|| missing(neutral, "polarizability_A3"))?;
+    let polarizability =
+        neutral.polarizability_a3.ok_or_else(|| missing(neutral, "polarizability_A3"))?;
     let reduced_mass = ion_mass * neutral_mass / (ion_mass + neutral_mass);
     let dipole = neutral.dipole_d.unwrap_or(0.0);
-    Ok(coefficient(
-        polarizability,
-        dipole,
-        reduced_mass,
-        ion.charge,
-        temperature,
-    ))
+    Ok(coefficient(polarizability, dipole, reduced_mass, ion.charge, temperature))
 }
 
 /// The coefficient of a reaction: alpha times capture.
@@ -117,10 +103,7 @@ pub(super) fn of(
 ) -> Result<f64, RateError> {
     let [a, b] = species.reactants else {
         let wanted = "two reactants, an ion and a neutral".to_string();
-        return Err(RateError::Shape {
-            law: Law::Capture,
-            wanted,
-        });
+        return Err(RateError::Shape { law: Law::Capture, wanted });
     };
     Ok(numbers.alpha * of_pair(a, b, temperature)?)
 }
@@ -136,13 +119,7 @@ mod tests {
             ("unit inputs", 1.0, 1.0, 1, 2.3420e-9),
             ("fourfold polarizability doubles it", 4.0, 1.0, 1, 4.6840e-9),
             ("fourfold reduced mass halves it", 1.0, 4.0, 1, 1.1710e-9),
-            (
-                "a double charge doubles it, of either sign",
-                1.0,
-                1.0,
-                -2,
-                4.6840e-9,
-            ),
+            ("a double charge doubles it, of either sign", 1.0, 1.0, -2, 4.6840e-9),
         ];
         for (case, polarizability, mass, charge, expected) in cases {
             let got = langevin(polarizability, mass, charge);
@@ -163,17 +140,11 @@ mod tests {
         let ion = Species::new("H3+", None).unwrap();
         let other = Species::new("O-", None).unwrap();
         let electron = Species::new("e-", None).unwrap();
-        assert!(matches!(
-            of_pair(&ion, &water, 10.0),
-            Err(RateError::MissingData { .. })
-        ));
+        assert!(matches!(of_pair(&ion, &water, 10.0), Err(RateError::MissingData { .. })));
         water.polarizability_a3 = Some(1.48);
         assert!(of_pair(&ion, &water, 10.0).is_ok());
         for pair in [[&ion, &other], [&electron, &water], [&water, &water]] {
-            assert!(matches!(
-                of_pair(pair[0], pair[1], 10.0),
-                Err(RateError::Shape { .. })
-            ));
+            assert!(matches!(of_pair(pair[0], pair[1], 10.0), Err(RateError::Shape { .. })));
         }
     }
 }

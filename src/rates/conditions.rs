@@ -1,7 +1,11 @@
 //! The local conditions that coefficients depend on, and their ranges.
 
+use serde::Serialize;
+
+use crate::units::Dimension;
+
 /// Local conditions of a piece of cloud.
-#[derive(Clone, Copy, Debug, PartialEq)]
+#[derive(Clone, Copy, Debug, PartialEq, Serialize)]
 pub struct Conditions {
     /// Hydrogen nuclei n_H = n(H) + 2 n(H2), cm^-3.
     pub hydrogen_density: f64,
@@ -50,22 +54,9 @@ pub struct ConditionProblem {
 
 impl std::fmt::Display for ConditionProblem {
     fn fmt(&self, f: &mut std::fmt::Formatter<'_>) -> std::fmt::Result {
-        let Self {
-            key,
-            value,
-            low,
-            high,
-            unit,
-        } = self;
-        let unit = if *unit == "1" {
-            String::new()
-        } else {
-            format!(" {unit}")
-        };
-        write!(
-            f,
-            "{key} = {value:?}{unit} is outside {low:?} to {high:?}{unit}"
-        )
+        let Self { key, value, low, high, unit } = self;
+        let unit = if *unit == "1" { String::new() } else { format!(" {unit}") };
+        write!(f, "{key} = {value:?}{unit} is outside {low:?} to {high:?}{unit}")
     }
 }
 
@@ -118,60 +109,83 @@ impl Conditions {
         self
     }
 
-    /// Every condition by its name in the run file: key, value, unit, and the
-    /// range that is accepted.
+    /// Every condition: its name in the run file, what it measures (and so its
+    /// documented unit), and the range that is accepted.
     ///
     /// The tool is meant for n_H 1 to 1e9 cm^-3, T 5 to 3000 K, zeta 1e-19 to
     /// 1e-13 s^-1, A_V 0 to 50 mag and chi 0 to 1e6; a little beyond that is
     /// accepted so that limits can be explored.
-    pub fn listed(&self) -> [(&'static str, f64, &'static str, f64, f64); 14] {
+    pub const KEYS: [(&'static str, Dimension, f64, f64); 14] = [
+        ("hydrogen_density", Dimension::NumberDensity, 1e-3, 1e12),
+        ("temperature", Dimension::Temperature, 1.0, 1e5),
+        ("dust_temperature", Dimension::Temperature, 1.0, 1e5),
+        ("cosmic_ray_ionization_rate", Dimension::Rate, 0.0, 1e-10),
+        ("visual_extinction", Dimension::Extinction, 0.0, 1e3),
+        ("radiation_field", Dimension::Dimensionless, 0.0, 1e8),
+        ("dust_albedo", Dimension::Dimensionless, 0.0, 0.99),
+        ("gas_to_dust", Dimension::Dimensionless, 1.0, 1e6),
+        ("h2_column", Dimension::ColumnDensity, 0.0, 1e26),
+        ("co_column", Dimension::ColumnDensity, 0.0, 1e24),
+        ("n2_column", Dimension::ColumnDensity, 0.0, 1e24),
+        ("doppler_width", Dimension::Speed, 0.01, 100.0),
+        ("grain_radius", Dimension::Length, 1e-3, 10.0),
+        ("reference_electron_abundance", Dimension::Dimensionless, 1e-15, 2.0),
+    ];
+
+    /// The conditions in the order of [`Conditions::KEYS`], to be read or set.
+    fn slots(&mut self) -> [&mut f64; 14] {
         [
-            (
-                "hydrogen_density",
-                self.hydrogen_density,
-                "cm-3",
-                1e-3,
-                1e12,
-            ),
-            ("temperature", self.temperature, "K", 1.0, 1e5),
-            ("dust_temperature", self.dust_temperature, "K", 1.0, 1e5),
-            (
-                "cosmic_ray_ionization_rate",
-                self.cosmic_ray_ionization_rate,
-                "s-1",
-                0.0,
-                1e-10,
-            ),
-            ("visual_extinction", self.visual_extinction, "mag", 0.0, 1e3),
-            ("radiation_field", self.radiation_field, "1", 0.0, 1e8),
-            ("dust_albedo", self.dust_albedo, "1", 0.0, 0.99),
-            ("gas_to_dust", self.gas_to_dust, "1", 1.0, 1e6),
-            ("h2_column", self.h2_column, "cm-2", 0.0, 1e26),
-            ("co_column", self.co_column, "cm-2", 0.0, 1e24),
-            ("n2_column", self.n2_column, "cm-2", 0.0, 1e24),
-            ("doppler_width", self.doppler_width, "km s-1", 0.01, 100.0),
-            ("grain_radius", self.grain_radius, "um", 1e-3, 10.0),
-            (
-                "reference_electron_abundance",
-                self.reference_electron_abundance,
-                "1",
-                1e-15,
-                2.0,
-            ),
+            &mut self.hydrogen_density,
+            &mut self.temperature,
+            &mut self.dust_temperature,
+            &mut self.cosmic_ray_ionization_rate,
+            &mut self.visual_extinction,
+            &mut self.radiation_field,
+            &mut self.dust_albedo,
+            &mut self.gas_to_dust,
+            &mut self.h2_column,
+            &mut self.co_column,
+            &mut self.n2_column,
+            &mut self.doppler_width,
+            &mut self.grain_radius,
+            &mut self.reference_electron_abundance,
         ]
+    }
+
+    fn position(key: &str) -> Option<usize> {
+        Self::KEYS.iter().position(|(name, ..)| *name == key)
+    }
+
+    /// The value of a condition by its name; none when there is no such one.
+    pub fn get(mut self, key: &str) -> Option<f64> {
+        Self::position(key).map(|at| *self.slots()[at])
+    }
+
+    /// Sets a condition by its name, in its documented unit; false when there is
+    /// no such one. Nothing else follows: the dust stays as warm as it was.
+    pub fn set(&mut self, key: &str, value: f64) -> bool {
+        match Self::position(key) {
+            Some(at) => {
+                *self.slots()[at] = value;
+                true
+            }
+            None => false,
+        }
     }
 
     /// What is out of range; empty when all is well.
     pub fn validate(&self) -> Vec<ConditionProblem> {
-        self.listed()
+        let mut copy = *self;
+        copy.slots()
             .into_iter()
-            .filter(|(_, value, _, low, high)| !(low <= value && value <= high))
-            .map(|(key, value, unit, low, high)| ConditionProblem {
+            .zip(Self::KEYS)
+            .filter(|(value, (.., low, high))| !(*low..=*high).contains(&**value))
+            .map(|(value, (key, dimension, low, high))| ConditionProblem {
                 key,
-                value,
+                value: *value,
                 low,
                 high,
-                unit,
+                unit: dimension.unit(),
             })
             .collect()
     }
@@ -222,6 +236,20 @@ mod tests {
             bad.validate()[1].to_string(),
             "radiation_field = -1.0 is outside 0.0 to 100000000.0"
         );
+    }
+
+    #[test]
+    fn every_condition_is_set_and_read_by_its_name() {
+        for (key, ..) in Conditions::KEYS {
+            let mut conditions = Conditions::default();
+            assert!(conditions.set(key, 0.125));
+            let got = conditions.get(key).unwrap();
+            assert!((got - 0.125).abs() < 1e-15, "{key}");
+            let text = serde_json::to_value(conditions).unwrap();
+            assert!((text[key].as_f64().unwrap() - 0.125).abs() < 1e-15, "{key}");
+        }
+        assert!(!Conditions::default().set("warmth", 1.0));
+        assert_eq!(Conditions::default().get("warmth"), None);
     }
 
     #[test]

@@ -43,38 +43,14 @@ pub fn h2_formation(numbers: Numbers, conditions: &Conditions, temperature: f64)
 ///
 /// Weingartner & Draine 2001, ApJ 563, 842, table 3. Provenance: memory.
 const EFFECTIVE: [(&str, [f64; 7]); 8] = [
-    (
-        "H",
-        [12.25, 8.074e-6, 1.378, 5.087e2, 1.586e-2, 0.4723, 1.102e-5],
-    ),
-    (
-        "He",
-        [5.572, 3.185e-7, 1.512, 5.115e3, 3.903e-7, 0.4956, 5.494e-7],
-    ),
-    (
-        "C",
-        [45.58, 6.089e-3, 1.128, 4.331e2, 4.845e-2, 0.8120, 1.333e-4],
-    ),
-    (
-        "Na",
-        [2.178, 1.732e-7, 2.133, 1.029e4, 1.859e-6, 1.0341, 3.223e-5],
-    ),
-    (
-        "Mg",
-        [2.510, 8.116e-8, 1.864, 6.170e4, 2.169e-6, 0.9605, 7.232e-5],
-    ),
-    (
-        "Si",
-        [2.166, 5.678e-8, 1.874, 4.375e4, 1.635e-6, 0.8964, 7.538e-5],
-    ),
-    (
-        "S",
-        [3.064, 7.769e-5, 1.319, 1.087e2, 3.475e-1, 0.4790, 4.689e-2],
-    ),
-    (
-        "Fe",
-        [1.701, 9.554e-8, 1.851, 5.763e4, 4.116e-8, 0.9456, 2.198e-5],
-    ),
+    ("H", [12.25, 8.074e-6, 1.378, 5.087e2, 1.586e-2, 0.4723, 1.102e-5]),
+    ("He", [5.572, 3.185e-7, 1.512, 5.115e3, 3.903e-7, 0.4956, 5.494e-7]),
+    ("C", [45.58, 6.089e-3, 1.128, 4.331e2, 4.845e-2, 0.8120, 1.333e-4]),
+    ("Na", [2.178, 1.732e-7, 2.133, 1.029e4, 1.859e-6, 1.0341, 3.223e-5]),
+    ("Mg", [2.510, 8.116e-8, 1.864, 6.170e4, 2.169e-6, 0.9605, 7.232e-5]),
+    ("Si", [2.166, 5.678e-8, 1.874, 4.375e4, 1.635e-6, 0.8964, 7.538e-5]),
+    ("S", [3.064, 7.769e-5, 1.319, 1.087e2, 3.475e-1, 0.4790, 4.689e-2]),
+    ("Fe", [1.701, 9.554e-8, 1.851, 5.763e4, 4.116e-8, 0.9456, 2.198e-5]),
 ];
 
 /// The ions that have effective recombination constants, as names.
@@ -156,9 +132,7 @@ pub(super) fn of_recombination(
             if !(ion.is_ion() && other.is_electron()) {
                 return Err(wrong());
             }
-            let none = || RateError::NoConstants {
-                ion: ion.name.clone(),
-            };
+            let none = || RateError::NoConstants { ion: ion.name.clone() };
             let element = match ion.atoms.as_slice() {
                 [(element, 1)] if ion.charge == 1 => element,
                 _ => return Err(none()),
@@ -220,30 +194,16 @@ mod tests {
     #[test]
     fn h2_formation_follows_jura_and_sticks_less_when_hot() {
         // Jura 1975: 3e-17 cm3 s-1; S by hand from Hollenbach & McKee 1979.
-        let cases = [
-            (10.0, 10.0, 0.832),
-            (100.0, 10.0, 0.5885),
-            (1000.0, 20.0, 0.0814),
-        ];
+        let cases = [(10.0, 10.0, 0.832), (100.0, 10.0, 0.5885), (1000.0, 20.0, 0.0814)];
         for (gas, dust, expected) in cases {
             let got = sticking(gas, dust);
             assert!((got / expected - 1.0).abs() < 2e-3, "{gas}: {got}");
         }
-        let numbers = Numbers {
-            alpha: 3e-17,
-            beta: 0.5,
-            gamma: 0.0,
-        };
-        let c = Conditions {
-            hydrogen_density: 1e4,
-            ..Conditions::default()
-        };
+        let numbers = Numbers { alpha: 3e-17, beta: 0.5, gamma: 0.0 };
+        let c = Conditions { hydrogen_density: 1e4, ..Conditions::default() };
         let got = h2_formation(numbers, &c, 100.0);
         assert!((got / (3e-13 * sticking(100.0, 10.0)) - 1.0).abs() < 1e-12);
-        let thin = Conditions {
-            gas_to_dust: 200.0,
-            ..c
-        };
+        let thin = Conditions { gas_to_dust: 200.0, ..c };
         assert!((h2_formation(numbers, &thin, 100.0) / got - 0.5).abs() < 1e-12);
     }
 }

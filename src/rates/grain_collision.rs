@@ -76,19 +76,9 @@ mod tests {
         let tau = reduced_temperature(0.1, 10.0, 1);
         assert!((tau / 0.05984 - 1.0).abs() < 1e-3, "{tau}");
         let cases = [
-            (
-                "opposite charges, 10 K",
-                focusing(0.06, -1.0),
-                17.667 * 1.98533,
-                1e-4,
-            ),
+            ("opposite charges, 10 K", focusing(0.06, -1.0), 17.667 * 1.98533, 1e-4),
             ("neutral grain, 10 K", focusing(0.06, 0.0), 6.11663, 1e-4),
-            (
-                "like charges, 10 K",
-                focusing(0.06, 1.0),
-                2.41975 * 2.40369e-4,
-                1e-3,
-            ),
+            ("like charges, 10 K", focusing(0.06, 1.0), 2.41975 * 2.40369e-4, 1e-3),
             ("opposite charges, hot", focusing(1e9, -1.0), 1.0, 1e-4),
         ];
         for (case, got, expected, tolerance) in cases {

@@ -35,12 +35,8 @@ pub enum Axis {
 }
 
 /// Names kept for gas-ice exchange, which is not yet built.
-const RESERVED: [&str; 4] = [
-    "freeze_out",
-    "thermal_desorption",
-    "cosmic_ray_desorption",
-    "photodesorption",
-];
+const RESERVED: [&str; 4] =
+    ["freeze_out", "thermal_desorption", "cosmic_ray_desorption", "photodesorption"];
 
 /// Why a word is not a law.
 #[derive(Clone, Debug, PartialEq, Eq)]
@@ -140,10 +136,7 @@ impl Law {
 
     /// Whether the coefficient depends on the gas temperature.
     pub fn depends_on_temperature(self) -> bool {
-        !matches!(
-            self,
-            Self::CosmicRay | Self::CosmicRayPhoton | Self::Starlight
-        )
+        !matches!(self, Self::CosmicRay | Self::CosmicRayPhoton | Self::Starlight)
     }
 
     /// The coefficient at `temperature` (K, which may be the edge of a row
@@ -198,16 +191,8 @@ mod tests {
             assert!(!law.describe().is_empty());
         }
         for name in RESERVED {
-            assert!(
-                Law::from_name(name)
-                    .unwrap_err()
-                    .to_string()
-                    .contains("not yet built")
-            );
+            assert!(Law::from_name(name).unwrap_err().to_string().contains("not yet built"));
         }
-        assert!(matches!(
-            Law::from_name("Thermal"),
-            Err(LawNameError::Unknown(_))
-        ));
+        assert!(matches!(Law::from_name("Thermal"), Err(LawNameError::Unknown(_))));
     }
 }

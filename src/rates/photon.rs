@@ -57,11 +57,8 @@ pub fn shield_of(species: &Species) -> Shield {
     if !species.is_neutral_gas() {
         return Shield::None;
     }
-    let atoms: Vec<(&str, u32)> = species
-        .atoms
-        .iter()
-        .map(|(element, count)| (element.as_str(), *count))
-        .collect();
+    let atoms: Vec<(&str, u32)> =
+        species.atoms.iter().map(|(element, count)| (element.as_str(), *count)).collect();
     match atoms.as_slice() {
         [("H", 2)] => Shield::H2,
         [("C", 1), ("O", 1)] => Shield::Co,
@@ -84,10 +81,7 @@ pub fn shielding_factor(species: &Species, conditions: &Conditions) -> f64 {
 fn single(law: Law, species: Participants<'_>) -> Result<&Species, RateError> {
     match species.reactants {
         [one] => Ok(one),
-        _ => Err(RateError::Shape {
-            law,
-            wanted: "one reactant".to_string(),
-        }),
+        _ => Err(RateError::Shape { law, wanted: "one reactant".to_string() }),
     }
 }
 
@@ -97,10 +91,7 @@ pub(super) fn of_cosmic_ray(
     conditions: &Conditions,
 ) -> Result<f64, RateError> {
     single(Law::CosmicRay, species)?;
-    Ok(cosmic_ray(
-        numbers.alpha,
-        conditions.cosmic_ray_ionization_rate,
-    ))
+    Ok(cosmic_ray(numbers.alpha, conditions.cosmic_ray_ionization_rate))
 }
 
 pub(super) fn of_cosmic_ray_photon(
@@ -110,11 +101,7 @@ pub(super) fn of_cosmic_ray_photon(
 ) -> Result<f64, RateError> {
     single(Law::CosmicRayPhoton, species)?;
     let zeta = conditions.cosmic_ray_ionization_rate;
-    Ok(cosmic_ray_photon(
-        numbers.alpha,
-        zeta,
-        conditions.dust_albedo,
-    ))
+    Ok(cosmic_ray_photon(numbers.alpha, zeta, conditions.dust_albedo))
 }
 
 pub(super) fn of_starlight(
@@ -124,12 +111,7 @@ pub(super) fn of_starlight(
 ) -> Result<f64, RateError> {
     let reactant = single(Law::Starlight, species)?;
     let c = conditions;
-    let bare = starlight(
-        numbers.alpha,
-        c.radiation_field,
-        numbers.gamma,
-        c.visual_extinction,
-    );
+    let bare = starlight(numbers.alpha, c.radiation_field, numbers.gamma, c.visual_extinction);
     Ok(bare * shielding_factor(reactant, conditions))
 }
 
@@ -141,21 +123,9 @@ mod tests {
     fn cosmic_ray_and_photon_laws_follow_their_formulas() {
         let cases = [
             ("direct", cosmic_ray(0.5, 1.3e-17), 6.5e-18),
-            (
-                "secondary photons",
-                cosmic_ray_photon(970.0, 1e-17, 0.5),
-                1.94e-14,
-            ),
-            (
-                "starlight at the surface",
-                starlight(3.5e-10, 2.0, 1.7, 0.0),
-                7e-10,
-            ),
-            (
-                "starlight inside",
-                starlight(1e-10, 1.0, 2.0, 0.5),
-                1e-10 / std::f64::consts::E,
-            ),
+            ("secondary photons", cosmic_ray_photon(970.0, 1e-17, 0.5), 1.94e-14),
+            ("starlight at the surface", starlight(3.5e-10, 2.0, 1.7, 0.0), 7e-10),
+            ("starlight inside", starlight(1e-10, 1.0, 2.0, 0.5), 1e-10 / std::f64::consts::E),
         ];
         for (case, got, expected) in cases {
             assert!((got / expected - 1.0).abs() < 1e-13, "{case}: {got:e}");
@@ -175,11 +145,7 @@ mod tests {
             ("C", Shield::None),
         ];
         for (name, expected) in cases {
-            assert_eq!(
-                shield_of(&Species::new(name, None).unwrap()),
-                expected,
-                "{name}"
-            );
+            assert_eq!(shield_of(&Species::new(name, None).unwrap()), expected, "{name}");
         }
     }
 }

@@ -18,11 +18,7 @@ pub fn h2(h2_column: f64, doppler_width: f64) -> f64 {
     let core = 1.0 + x / doppler_width;
     let factor = 0.965 / (core * core) + 0.035 / root * libm::exp(-8.5e-4 * root);
     // 0.035 exp(-8.5e-4) + 0.965 is 3e-5 short of 1 at x = 0.
-    if h2_column > 0.0 {
-        factor.min(1.0)
-    } else {
-        1.0
-    }
+    if h2_column > 0.0 { factor.min(1.0) } else { 1.0 }
 }
 
 /// log10 of N(CO)/cm^-2 at the columns of [`CO_TABLE`].
@@ -37,24 +33,12 @@ const H2_AXIS: [f64; 5] = [19.0, 20.0, 21.0, 22.0, 23.0];
 /// Visser, van Dishoeck & Black 2009, Astron. Astrophys. 503, 323, table 5.
 /// Provenance: memory; single digits may be off, trends are right.
 const CO_TABLE: [[f64; 8]; 6] = [
-    [
-        1.0, 9.681e-1, 7.764e-1, 3.631e-1, 7.013e-2, 1.295e-2, 1.738e-3, 9.985e-5,
-    ],
-    [
-        8.215e-1, 7.916e-1, 6.160e-1, 2.749e-1, 5.351e-2, 1.065e-2, 1.519e-3, 8.818e-5,
-    ],
-    [
-        7.160e-1, 6.900e-1, 5.360e-1, 2.359e-1, 4.416e-2, 8.769e-3, 1.254e-3, 7.558e-5,
-    ],
-    [
-        3.500e-1, 3.415e-1, 2.863e-1, 1.360e-1, 2.500e-2, 4.983e-3, 7.151e-4, 3.796e-5,
-    ],
-    [
-        4.973e-2, 4.877e-2, 4.296e-2, 2.110e-2, 4.958e-3, 9.245e-4, 1.745e-4, 8.377e-6,
-    ],
-    [
-        1.310e-4, 1.293e-4, 1.160e-4, 6.346e-5, 1.822e-5, 6.842e-6, 3.622e-6, 3.572e-7,
-    ],
+    [1.0, 9.681e-1, 7.764e-1, 3.631e-1, 7.013e-2, 1.295e-2, 1.738e-3, 9.985e-5],
+    [8.215e-1, 7.916e-1, 6.160e-1, 2.749e-1, 5.351e-2, 1.065e-2, 1.519e-3, 8.818e-5],
+    [7.160e-1, 6.900e-1, 5.360e-1, 2.359e-1, 4.416e-2, 8.769e-3, 1.254e-3, 7.558e-5],
+    [3.500e-1, 3.415e-1, 2.863e-1, 1.360e-1, 2.500e-2, 4.983e-3, 7.151e-4, 3.796e-5],
+    [4.973e-2, 4.877e-2, 4.296e-2, 2.110e-2, 4.958e-3, 9.245e-4, 1.745e-4, 8.377e-6],
+    [1.310e-4, 1.293e-4, 1.160e-4, 6.346e-5, 1.822e-5, 6.842e-6, 3.622e-6, 3.572e-7],
 ];
 
 /// Shielding of CO by its own lines and those of H2.
@@ -108,7 +92,8 @@ pub fn n2(n2_column: f64, h2_column: f64) -> f64 {
 /// the index of the left node (0 is none) and the share of the right one.
 fn locate(axis: &[f64], column: f64) -> (usize, f64) {
     let last = axis.len() - 1;
-    if !(column > 0.0) {
+    // A column that is not a number shields nothing; conditions are checked first.
+    if column.is_nan() || column <= 0.0 {
         return (0, 0.0);
     }
     let log = libm::log10(column);
@@ -126,13 +111,16 @@ fn locate(axis: &[f64], column: f64) -> (usize, f64) {
 mod tests {
     use super::*;
 
+    /// A shielding function of one column and its name.
+    type Named = (&'static str, fn(f64) -> f64);
+
     fn columns() -> impl Iterator<Item = f64> {
         std::iter::once(0.0).chain((0..560).map(|i| 10f64.powf(f64::from(i) * 0.05)))
     }
 
     #[test]
     fn shielding_is_one_without_a_column_and_never_rises() {
-        let functions: [(&str, fn(f64) -> f64); 6] = [
+        let functions: [Named; 6] = [
             ("H2", |n| h2(n, 1.0)),
             ("H2, broad lines", |n| h2(n, 10.0)),
             ("CO by CO", |n| co(n, 0.0)),
@@ -145,10 +133,7 @@ mod tests {
             let mut before = 1.0;
             for column in columns() {
                 let now = function(column);
-                assert!(
-                    (0.0..=before).contains(&now),
-                    "{name} at {column:e}: {now:e}"
-                );
+                assert!((0.0..=before).contains(&now), "{name} at {column:e}: {now:e}");
                 before = now;
             }
         }
@@ -161,12 +146,7 @@ mod tests {
         let cases = [
             ("H2 at 5e18", h2(5e18, 1.0), 3.2145e-4, 1e-4),
             ("CO at a node", co(1e16, 1e21), 2.500e-2, 1e-10),
-            (
-                "CO between nodes",
-                co(10f64.powf(16.5), 0.0),
-                3.0136e-2,
-                1e-4,
-            ),
+            ("CO between nodes", co(10f64.powf(16.5), 0.0), 3.0136e-2, 1e-4),
             ("CO beyond the table", co(1e25, 1e28), 3.572e-7, 1e-10),
         ];
         for (case, got, expected, tolerance) in cases {

@@ -31,10 +31,7 @@ pub(super) fn of(
 ) -> Result<f64, RateError> {
     if !(1..=3).contains(&species.reactants.len()) {
         let wanted = "one to three reactants".to_string();
-        return Err(RateError::Shape {
-            law: Law::Thermal,
-            wanted,
-        });
+        return Err(RateError::Shape { law: Law::Thermal, wanted });
     }
     Ok(coefficient(numbers, temperature))
 }

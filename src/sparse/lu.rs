@@ -190,8 +190,8 @@ impl Symbolic {
             let columns = &self.upper[self.upper_start[i]..self.upper_start[i + 1]];
             let values = &factors.upper[self.value_start[i]..self.value_start[i + 1]];
             let (sparse, full) = values.split_at(columns.len());
-            let sum = dot(columns, sparse, x)
-                + dot_consecutive(full, &x[self.trailing.max(i + 1)..]);
+            let sum =
+                dot(columns, sparse, x) + dot_consecutive(full, &x[self.trailing.max(i + 1)..]);
             x[i] = (x[i] - sum) * factors.inverse_diagonal[i];
         }
     }

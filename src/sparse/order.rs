@@ -29,11 +29,8 @@ pub fn elimination_order(pattern: &Pattern, last: &[usize]) -> Vec<usize> {
     let mut order = Vec::with_capacity(n);
     while !left.is_empty() {
         let cost = |i: usize| (held[i], count(&rows[i]) * count(&columns[i]), i);
-        let (place, &pivot) = left
-            .iter()
-            .enumerate()
-            .min_by_key(|&(_, &i)| cost(i))
-            .expect("some unknown is left");
+        let (place, &pivot) =
+            left.iter().enumerate().min_by_key(|&(_, &i)| cost(i)).expect("some unknown is left");
         left.remove(place);
         order.push(pivot);
         let row = std::mem::take(&mut rows[pivot]);
@@ -69,9 +66,7 @@ fn count(bits: &[u64]) -> u32 {
 }
 
 fn members(bits: &[u64]) -> Vec<usize> {
-    (0..bits.len() * 64)
-        .filter(|&i| bits[i / 64] >> (i % 64) & 1 == 1)
-        .collect()
+    (0..bits.len() * 64).filter(|&i| bits[i / 64] >> (i % 64) & 1 == 1).collect()
 }
 
 #[cfg(test)]
@@ -92,6 +87,13 @@ mod tests {
     fn held_unknowns_come_last() {
         let pattern = Pattern::new(5, [(0, 1), (1, 2), (2, 3), (3, 4), (4, 0)]);
         let order = elimination_order(&pattern, &[1, 3]);
-        assert_eq!({ let mut t = order[3..].to_vec(); t.sort_unstable(); t }, vec![1, 3]);
+        assert_eq!(
+            {
+                let mut t = order[3..].to_vec();
+                t.sort_unstable();
+                t
+            },
+            vec![1, 3]
+        );
     }
 }

@@ -42,10 +42,7 @@ pub const WEIGHTS: &[(&str, f64)] = &[
 
 /// Atomic weight of an element, u; none when it is not in the table.
 pub fn weight_u(symbol: &str) -> Option<f64> {
-    WEIGHTS
-        .iter()
-        .find(|(name, _)| *name == symbol)
-        .map(|(_, weight)| *weight)
+    WEIGHTS.iter().find(|(name, _)| *name == symbol).map(|(_, weight)| *weight)
 }
 
 #[cfg(test)]
@@ -56,13 +53,7 @@ mod tests {
     fn weights_are_distinct_and_rise_but_for_the_two_known_inversions() {
         for pair in WEIGHTS.windows(2) {
             let falls = pair[1].1 < pair[0].1;
-            assert_eq!(
-                falls,
-                ["Ar", "Co"].contains(&pair[0].0),
-                "{} {}",
-                pair[0].0,
-                pair[1].0
-            );
+            assert_eq!(falls, ["Ar", "Co"].contains(&pair[0].0), "{} {}", pair[0].0, pair[1].0);
         }
         let mut names: Vec<&str> = WEIGHTS.iter().map(|(name, _)| *name).collect();
         names.sort_unstable();

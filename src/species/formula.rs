@@ -71,11 +71,7 @@ impl std::fmt::Display for FormulaError {
 impl std::error::Error for FormulaError {}
 
 fn grammar(offset: usize, message: String) -> FormulaError {
-    FormulaError {
-        kind: FormulaErrorKind::Grammar,
-        offset,
-        message,
-    }
+    FormulaError { kind: FormulaErrorKind::Grammar, offset, message }
 }
 
 /// Largest count of one element in one species.
@@ -89,28 +85,16 @@ impl Formula {
     pub fn parse(name: &str) -> Result<Self, FormulaError> {
         let (body, charge, ice) = split_name(name)?;
         if body == "e" && charge == -1 && !ice {
-            return Ok(Self {
-                atoms: Vec::new(),
-                charge,
-                phase: Phase::Gas,
-            });
+            return Ok(Self { atoms: Vec::new(), charge, phase: Phase::Gas });
         }
         if body == GRAIN {
             if ice {
                 return Err(grammar(body.len(), format!("`{name}`: dust is not ice")));
             }
-            return Ok(Self {
-                atoms: vec![(GRAIN.to_string(), 1)],
-                charge,
-                phase: Phase::Dust,
-            });
+            return Ok(Self { atoms: vec![(GRAIN.to_string(), 1)], charge, phase: Phase::Dust });
         }
         let atoms = read_body(name, body)?;
-        Ok(Self {
-            atoms,
-            charge,
-            phase: if ice { Phase::Ice } else { Phase::Gas },
-        })
+        Ok(Self { atoms, charge, phase: if ice { Phase::Ice } else { Phase::Gas } })
     }
 
     /// Reads charge and phase from the name and the atoms from a composition
@@ -153,11 +137,7 @@ impl Formula {
             (false, true) => Phase::Ice,
             (false, false) => Phase::Gas,
         };
-        Ok(Self {
-            atoms,
-            charge,
-            phase,
-        })
+        Ok(Self { atoms, charge, phase })
     }
 
     /// Mass, u; none when an element has no known weight (dust, made-up ones).
@@ -168,16 +148,10 @@ impl Formula {
 
 /// Body, charge and whether `(ice)` stands at the end.
 fn split_name(name: &str) -> Result<(&str, i32, bool), FormulaError> {
-    if let Some(at) = name
-        .chars()
-        .position(|c| c.is_whitespace() || c.is_control() || c == ',')
-    {
+    if let Some(at) = name.chars().position(|c| c.is_whitespace() || c.is_control() || c == ',') {
         return Err(grammar(
             at,
-            format!(
-                "`{}`: a name holds no blanks or commas",
-                name.escape_debug()
-            ),
+            format!("`{}`: a name holds no blanks or commas", name.escape_debug()),
         ));
     }
     let (rest, ice) = match name.strip_suffix("(ice)") {
@@ -233,10 +207,7 @@ fn read_body(name: &str, body: &str) -> Result<Vec<(String, u32)>, FormulaError>
         } else {
             let text: String = letters[digits..at].iter().collect();
             read_count(&text).ok_or_else(|| {
-                grammar(
-                    digits,
-                    format!("`{name}`: `{text}` is not a count of atoms"),
-                )
+                grammar(digits, format!("`{name}`: `{text}` is not a count of atoms"))
             })?
         };
         match atoms.iter_mut().find(|(known, _)| *known == element) {

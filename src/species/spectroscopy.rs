@@ -69,11 +69,8 @@ pub fn partition_function(name: &str, temperature: f64) -> Option<f64> {
     let levels = MOLECULES.iter().find(|levels| levels.name == name)?;
     // Everything in units of k T from here on: one wavenumber is x of them.
     let x = KELVIN_PER_WAVENUMBER / temperature;
-    let electronic: f64 = levels
-        .electronic
-        .iter()
-        .map(|(weight, energy)| weight * libm::exp(-energy * x))
-        .sum();
+    let electronic: f64 =
+        levels.electronic.iter().map(|(weight, energy)| weight * libm::exp(-energy * x)).sum();
     let vibrations: f64 = levels
         .vibrations
         .iter()
@@ -90,10 +87,9 @@ impl Rotor {
             Self::Linear { b, symmetry } => sum_levels(b, x, |_| 1.0) / symmetry,
             Self::Hydrogen { b } => sum_levels(b, x, |j| if j % 2 == 0 { 1.0 } else { 3.0 }) / 4.0,
             Self::Pi { b, a, symmetry } => sum_pi(b, a, x) / symmetry,
-            Self::Bent {
-                constants: [p, q, r],
-                symmetry,
-            } => (std::f64::consts::PI / (p * q * r * x * x * x)).sqrt() / symmetry,
+            Self::Bent { constants: [p, q, r], symmetry } => {
+                (std::f64::consts::PI / (p * q * r * x * x * x)).sqrt() / symmetry
+            }
         }
     }
 }
@@ -128,14 +124,8 @@ fn sum_pi(b: f64, a: f64, x: f64) -> f64 {
         levels.push((weight, mean - half));
         levels.push((weight, mean + half));
     }
-    let lowest = levels
-        .iter()
-        .map(|(_, energy)| *energy)
-        .fold(f64::INFINITY, f64::min);
-    levels
-        .iter()
-        .map(|(weight, energy)| weight * libm::exp(-(energy - lowest) * x))
-        .sum()
+    let lowest = levels.iter().map(|(_, energy)| *energy).fold(f64::INFINITY, f64::min);
+    levels.iter().map(|(weight, energy)| weight * libm::exp(-(energy - lowest) * x)).sum()
 }
 
 /// Equilibrium constant of a reaction that keeps the number of particles:

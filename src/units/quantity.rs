@@ -92,10 +92,7 @@ pub fn parse_quantity(text: &str, dimension: Dimension) -> Result<f64, String> {
     let (number, unit) = text.split_at(number_length(text));
     let unit = unit.trim();
     let value: f64 = number.parse().map_err(|_| {
-        format!(
-            "`{text}` does not start with a number (wanted a number in {})",
-            dimension.unit()
-        )
+        format!("`{text}` does not start with a number (wanted a number in {})", dimension.unit())
     })?;
     if !value.is_finite() {
         return Err(format!("`{text}` is too large to be a number"));
@@ -110,10 +107,7 @@ pub fn parse_quantity(text: &str, dimension: Dimension) -> Result<f64, String> {
         }
     }
     let names: Vec<&str> = dimension.accepted().iter().map(|(name, _)| *name).collect();
-    Err(format!(
-        "`{unit}` is not a unit accepted here; use one of {}",
-        names.join(", ")
-    ))
+    Err(format!("`{unit}` is not a unit accepted here; use one of {}", names.join(", ")))
 }
 
 /// Length in bytes of the number at the start of `text`.
@@ -141,9 +135,7 @@ fn number_length(text: &str) -> usize {
 
 /// A unit without the characters that people write differently.
 fn squeeze(unit: &str) -> String {
-    unit.chars()
-        .filter(|c| !c.is_whitespace() && !matches!(c, '^' | '*'))
-        .collect()
+    unit.chars().filter(|c| !c.is_whitespace() && !matches!(c, '^' | '*')).collect()
 }
 
 #[cfg(test)]

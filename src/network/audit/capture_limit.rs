@@ -15,10 +15,7 @@ pub(super) fn check(network: &Network, options: &AuditOptions, findings: &mut Ve
     let mut pairs: BTreeMap<(usize, usize), Vec<&Reaction>> = BTreeMap::new();
     for reaction in &network.reactions {
         if let ([a, b], Axis::Collision) = (reaction.reactants.as_slice(), reaction.law().axis()) {
-            pairs
-                .entry((*a.min(b), *a.max(b)))
-                .or_default()
-                .push(reaction);
+            pairs.entry((*a.min(b), *a.max(b))).or_default().push(reaction);
         }
     }
     for ((a, b), channels) in pairs {
@@ -28,20 +25,14 @@ pub(super) fn check(network: &Network, options: &AuditOptions, findings: &mut Ve
             let Ok(limit) = capture::of_pair(one, other, temperature) else {
                 break;
             };
-            let sum: f64 = channels
-                .iter()
-                .filter_map(|r| held(network, r, temperature))
-                .sum();
+            let sum: f64 = channels.iter().filter_map(|r| held(network, r, temperature)).sum();
             let ratio = sum / limit;
             if ratio > options.capture_factor && worst.is_none_or(|(w, ..)| ratio > w) {
                 worst = Some((ratio, sum, limit, temperature));
             }
         }
         if let Some((ratio, sum, limit, temperature)) = worst {
-            let ids: Vec<&str> = channels
-                .iter()
-                .map(|reaction| reaction.id.as_str())
-                .collect();
+            let ids: Vec<&str> = channels.iter().map(|reaction| reaction.id.as_str()).collect();
             let message = format!(
                 "{} + {}: {sum:.2e} at {temperature} K is {ratio:.2} times the capture \
                  coefficient {limit:.2e} (rows {})",

@@ -8,7 +8,7 @@ use crate::network::{Network, Reaction};
 use crate::rates::Axis;
 use crate::species::spectroscopy::equilibrium_constant;
 
-use super::{AuditOptions, factor_between, factor_text, held, place_of};
+use super::{AuditOptions, factor_between, factor_text, held, is_nothing, place_of};
 
 /// Temperatures at which pairs are compared, K.
 const AT: [f64; 2] = [300.0, 1000.0];
@@ -52,6 +52,11 @@ fn compare(
         ) else {
             continue;
         };
+        if is_nothing(forward, there.max(constant * back))
+            || is_nothing(reverse, back.max(there / constant))
+        {
+            continue;
+        }
         let factor = factor_between(there, constant * back);
         if factor < options.balance_factor || worst.as_ref().is_some_and(|(w, _)| *w >= factor) {
             continue;

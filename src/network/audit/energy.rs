@@ -10,9 +10,7 @@ use super::{AuditOptions, file_beside, of_row, place_of};
 /// Reaction enthalpy at 0 K, kJ mol^-1; none when a value is missing.
 pub(super) fn enthalpy(network: &Network, reaction: &Reaction) -> Option<f64> {
     let side = |list: &[usize]| -> Option<f64> {
-        list.iter()
-            .map(|index| network.species[*index].enthalpy_kj_mol)
-            .sum()
+        list.iter().map(|index| network.species[*index].enthalpy_kj_mol).sum()
     };
     Some(side(&reaction.products)? - side(&reaction.reactants)?)
 }
@@ -41,10 +39,7 @@ pub(super) fn check(network: &Network, options: &AuditOptions, findings: &mut Ve
         if uphill > 0.0 {
             uphill_rows(network, reaction, change, uphill, findings);
         } else if change < -DOWNHILL_KJ_MOL {
-            let barrier = reaction
-                .rows
-                .iter()
-                .fold(0.0, |most: f64, row| most.max(row.gamma));
+            let barrier = reaction.rows.iter().fold(0.0, |most: f64, row| most.max(row.gamma));
             if barrier < SMALL_BARRIER_K {
                 continue;
             }
@@ -127,11 +122,7 @@ fn note_hindered(
     if options.every_row {
         for reaction in hindered {
             let message = format!("{}: downhill with a barrier", reaction.equation);
-            findings.push(Finding::note(
-                "audit-neutral-barrier",
-                place_of(reaction),
-                message,
-            ));
+            findings.push(Finding::note("audit-neutral-barrier", place_of(reaction), message));
         }
     } else if !hindered.is_empty() {
         let message = format!(

@@ -12,20 +12,11 @@ const LISTED: usize = 12;
 
 pub(super) fn check(network: &Network, options: &AuditOptions, findings: &mut Vec<Finding>) {
     let rows: Vec<&Row> = network.reactions.iter().flat_map(|r| &r.rows).collect();
-    let unsourced: Vec<&Row> = rows
-        .iter()
-        .copied()
-        .filter(|row| row.source.is_empty())
-        .collect();
+    let unsourced: Vec<&Row> = rows.iter().copied().filter(|row| row.source.is_empty()).collect();
     report(
         network,
         options,
-        (
-            Severity::Warning,
-            "audit-no-source",
-            "name no source",
-            "fill in source",
-        ),
+        (Severity::Warning, "audit-no-source", "name no source", "fill in source"),
         &unsourced,
         rows.len(),
         findings,
@@ -77,10 +68,7 @@ fn report(
 fn unused(network: &Network, findings: &mut Vec<Finding>) {
     let cited = |key: &str| {
         network.species.iter().any(|species| species.source == key)
-            || network
-                .reactions
-                .iter()
-                .any(|r| r.rows.iter().any(|row| row.source == key))
+            || network.reactions.iter().any(|r| r.rows.iter().any(|row| row.source == key))
     };
     let names: Vec<&str> = network
         .sources
@@ -98,11 +86,7 @@ fn unused(network: &Network, findings: &mut Vec<Finding>) {
     }
     let message = format!("{} sources are cited by nothing: {list}", names.len());
     findings.push(
-        Finding::note(
-            "audit-unused-source",
-            file_beside(network, "sources.csv"),
-            message,
-        )
-        .remedy("leave them out"),
+        Finding::note("audit-unused-source", file_beside(network, "sources.csv"), message)
+            .remedy("leave them out"),
     );
 }

@@ -3,7 +3,7 @@
 use crate::diagnostic::Finding;
 use crate::network::{Network, Reaction, Row};
 
-use super::{AuditOptions, factor_between, factor_text, of_row};
+use super::{AuditOptions, factor_between, factor_text, is_nothing, number_text, of_row};
 
 /// A stretch that no row covers, and the row and edge that are held there.
 struct Stretch<'a> {
@@ -28,24 +28,28 @@ pub(super) fn check(network: &Network, options: &AuditOptions, findings: &mut Ve
         short += 1;
         let mut worst: Option<(f64, String, &Row)> = None;
         for s in &stretches {
-            let (Some(kept), Some(continued)) = (
-                of_row(network, reaction, s.row, s.edge),
-                of_row(network, reaction, s.row, s.far),
-            ) else {
+            let (Some(kept), Some(continued)) =
+                (of_row(network, reaction, s.row, s.edge), of_row(network, reaction, s.row, s.far))
+            else {
                 continue;
             };
+            if is_nothing(reaction, kept) && is_nothing(reaction, continued) {
+                continue;
+            }
             let factor = factor_between(kept, continued);
             if factor < options.range_factor || worst.as_ref().is_some_and(|(f, ..)| *f >= factor) {
                 continue;
             }
             let message = format!(
-                "{}: no row covers {} to {} K; held at {} K it is {kept:.1e}, the formula \
-                 continued to {} K gives {continued:.1e}, {} apart",
+                "{}: no row covers {} to {} K; held at {} K it is {}, the formula \
+                 continued to {} K gives {}, {} apart",
                 reaction.equation,
                 s.low,
                 s.high,
                 s.edge,
+                number_text(kept),
                 s.far,
+                number_text(continued),
                 factor_text(factor)
             );
             worst = Some((factor, message, s.row));
@@ -61,7 +65,7 @@ pub(super) fn check(network: &Network, options: &AuditOptions, findings: &mut Ve
     if mild > 0 {
         let message = format!(
             "{short} of {} reactions do not cover {} to {} K; in {mild} of them it makes less \
-             than {} whether the edge is held or the formula continued",
+             than {} (or nothing) whether the edge is held or the formula continued",
             network.reactions.len(),
             options.coldest,
             options.hottest,
@@ -78,44 +82,20 @@ fn stretches(reaction: &Reaction, coldest: f64, hottest: f64) -> Vec<Stretch<'_>
     let first = &rows[0];
     if first.t_min > coldest {
         let (low, high) = (coldest, first.t_min.min(hottest));
-        list.push(Stretch {
-            low,
-            high,
-            row: first,
-            edge: first.t_min,
-            far: low,
-        });
+        list.push(Stretch { low, high, row: first, edge: first.t_min, far: low });
     }
     for pair in rows.windows(2) {
         let (low, high) = (pair[0].t_max, pair[1].t_min);
         if low < high && low < hottest && high > coldest {
             let middle = 0.5 * (low + high);
-            list.push(Stretch {
-                low,
-                high,
-                row: &pair[0],
-                edge: low,
-                far: middle,
-            });
-            list.push(Stretch {
-                low,
-                high,
-                row: &pair[1],
-                edge: high,
-                far: middle,
-            });
+            list.push(Stretch { low, high, row: &pair[0], edge: low, far: middle });
+            list.push(Stretch { low, high, row: &pair[1], edge: high, far: middle });
         }
     }
     let last = &rows[rows.len() - 1];
     if last.t_max < hottest {
         let (low, high) = (last.t_max.max(coldest), hottest);
-        list.push(Stretch {
-            low,
-            high,
-            row: last,
-            edge: last.t_max,
-            far: high,
-        });
+        list.push(Stretch { low, high, row: last, edge: last.t_max, far: high });
     }
     list
 }

@@ -4,36 +4,22 @@ use crate::diagnostic::Finding;
 use crate::network::{Extrapolate, Network};
 use crate::rates::Conditions;
 
-use super::{AuditOptions, file_beside};
-
-/// A coefficient below this does nothing in a cloud's life, in s^-1 or
-/// cm^3 s^-1 (1e-22 cm^3 s^-1 at 1e4 cm^-3 is once in 3e10 yr). Our choice.
-const NOTHING: f64 = 1e-22;
+use super::{AuditOptions, file_beside, is_nothing};
 
 pub(super) fn check(network: &Network, _: &AuditOptions, findings: &mut Vec<Finding>) {
     let mut made = vec![false; network.species.len()];
     let mut destroyed = vec![false; network.species.len()];
     let mut used = vec![false; network.species.len()];
     // Cold, and thin enough for starlight to come in.
-    let conditions = Conditions {
-        visual_extinction: 1.0,
-        ..Conditions::default()
-    }
-    .with_default_columns();
+    let conditions =
+        Conditions { visual_extinction: 1.0, ..Conditions::default() }.with_default_columns();
     for reaction in &network.reactions {
-        let value = network
-            .coefficient(reaction, &conditions, Extrapolate::Hold)
-            .unwrap_or(0.0);
-        let least = if reaction.depends_on.len() > 2 {
-            NOTHING * 1e-14
-        } else {
-            NOTHING
-        };
+        let value = network.coefficient(reaction, &conditions, Extrapolate::Hold).unwrap_or(0.0);
         let count =
             |list: &[usize], index: usize| list.iter().filter(|other| **other == index).count();
         for index in reaction.reactants.iter().chain(&reaction.products).copied() {
             used[index] = true;
-            if value < least {
+            if is_nothing(reaction, value) {
                 continue;
             }
             let before = count(&reaction.reactants, index);
@@ -44,12 +30,7 @@ pub(super) fn check(network: &Network, _: &AuditOptions, findings: &mut Vec<Find
     }
     let place = file_beside(network, "species.csv");
     let cases = [
-        (
-            "audit-never-used",
-            "take part in no reaction",
-            &used,
-            "leave them out",
-        ),
+        ("audit-never-used", "take part in no reaction", &used, "leave them out"),
         (
             "audit-never-made",
             "are made by nothing at 10 K",

@@ -4,14 +4,13 @@ use proptest::prelude::*;
 
 use super::*;
 
-fn cells(text: &str) -> (Vec<Vec<(String, u32, u32)>>, usize) {
+type Plain = (String, u32, u32);
+
+fn cells(text: &str) -> (Vec<Vec<Plain>>, usize) {
     let mut findings = Vec::new();
     let records = split("t", text, &mut findings);
     let plain = |record: Vec<Cell>| {
-        record
-            .into_iter()
-            .map(|cell| (cell.text, cell.line, cell.column))
-            .collect()
+        record.into_iter().map(|cell| (cell.text, cell.line, cell.column)).collect()
     };
     (records.into_iter().map(plain).collect(), findings.len())
 }
@@ -23,14 +22,7 @@ fn every_cell_knows_its_line_and_column() {
     assert_eq!(findings, 0);
     let owned = |text: &str, line, column| (text.to_string(), line, column);
     assert_eq!(records[0], [owned("a", 1, 1), owned("b", 1, 3)]);
-    assert_eq!(
-        records[1],
-        [
-            owned("\u{b5}m", 3, 2),
-            owned("x, \"y\"\nz", 3, 8),
-            owned("2", 4, 5)
-        ]
-    );
+    assert_eq!(records[1], [owned("\u{b5}m", 3, 2), owned("x, \"y\"\nz", 3, 8), owned("2", 4, 5)]);
     assert_eq!(records[2], [owned("3", 5, 1)]);
 }
 

@@ -62,11 +62,7 @@ fn names_that_say_nothing_are_refused_where_they_go_wrong() {
     ];
     for (name, kind, offset) in cases {
         let error = Formula::parse(name).unwrap_err();
-        assert_eq!(
-            (error.kind, error.offset),
-            (kind, offset),
-            "{name}: {error}"
-        );
+        assert_eq!((error.kind, error.offset), (kind, offset), "{name}: {error}");
     }
 }
 
@@ -75,9 +71,7 @@ fn a_composition_speaks_for_a_name_that_does_not() {
     let formula = Formula::with_composition("A++", "Q:2 H:1").unwrap();
     assert_eq!(formula.atoms, [("H".to_string(), 1), ("Q".to_string(), 2)]);
     assert_eq!((formula.charge, formula.mass_u()), (2, None));
-    for wrong in [
-        "", "Q", "Q:0", "Q:-1", "Q:1.5", "Q:1 Q:2", "1:1", "Q:x", ":1",
-    ] {
+    for wrong in ["", "Q", "Q:0", "Q:-1", "Q:1.5", "Q:1 Q:2", "1:1", "Q:x", ":1"] {
         assert!(Formula::with_composition("A", wrong).is_err(), "{wrong:?}");
     }
 }

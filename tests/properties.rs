@@ -37,7 +37,7 @@ fn model(network: &Arc<Network>, random: &RandomNetwork, tolerance: f64) -> Mode
 
 #[test]
 fn any_balanced_network_keeps_atoms_and_charge() {
-    check(200, |random| {
+    check(300, |random| {
         let (species, reactions) = random.own_tables();
         let network = support::network(&species, &reactions);
         let evolution = model(&network, &random, 1e-4).evolve();
@@ -51,7 +51,7 @@ fn any_balanced_network_keeps_atoms_and_charge() {
 
 #[test]
 fn the_order_of_species_and_reactions_changes_nothing_beyond_rounding() {
-    check(60, |random| {
+    check(150, |random| {
         let (species, reactions) = random.own_tables();
         let network = support::network(&species, &reactions);
         // A fixed shuffle: by the remainder of a multiple, then backwards.
@@ -157,7 +157,7 @@ const JACOBIAN_ROUNDING: f64 = 1e-12;
 
 #[test]
 fn the_analytic_jacobian_is_the_derivative_of_any_network() {
-    check(200, |random| {
+    check(300, |random| {
         let (species, reactions) = random.own_tables();
         let model = model(&support::network(&species, &reactions), &random, 1e-4);
         // Every species present, so that every derivative shows.
@@ -221,7 +221,7 @@ where
 
 #[test]
 fn the_width_of_a_batch_and_a_cells_neighbours_change_no_bit() {
-    check(60, |random| {
+    check(150, |random| {
         let (species, reactions) = random.own_tables();
         let model = model(&support::network(&species, &reactions), &random, 1e-5);
         let cells = problems(&random, &model);

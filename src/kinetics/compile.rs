@@ -140,13 +140,17 @@ impl Kinetics {
     }
 }
 
-/// The sums that do not follow from those before them: an element that occurs
-/// only in a fixed ratio to others says nothing new.
+/// The sums that do not follow from those before them, by rising number of
+/// members: an element that occurs only in a fixed ratio to others says nothing
+/// new, and a sum of many species follows from its parts with less rounding than
+/// a part from what is left of the whole.
 fn independent(sums: &[Vec<f64>]) -> Vec<&Vec<f64>> {
+    let mut by_size: Vec<&Vec<f64>> = sums.iter().collect();
+    by_size.sort_by_key(|sum| sum.iter().filter(|weight| weight.abs() > 0.0).count());
     // Gaussian elimination on small whole numbers.
     let mut reduced: Vec<(usize, Vec<f64>)> = Vec::new();
     let mut kept = Vec::new();
-    for sum in sums {
+    for sum in by_size {
         let mut rest = sum.clone();
         for (pivot, row) in &reduced {
             let factor = rest[*pivot] / row[*pivot];

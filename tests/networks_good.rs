@@ -215,3 +215,13 @@ fn the_two_ways_of_recombining_on_dust_do_not_mix() {
     let codes: Vec<&str> = errors.iter().map(|finding| finding.code).collect();
     assert_eq!(codes, ["network-mixed-dust"]);
 }
+
+#[test]
+fn a_shipped_network_that_does_not_exist_is_an_error_with_advice() {
+    let errors = duskwater::network::shipped::load("nowhere").unwrap_err();
+    assert_eq!(errors.len(), 1);
+    assert!(errors[0].message.contains("nowhere") && !errors[0].remedy.is_empty());
+    for name in duskwater::network::shipped::names() {
+        assert!(duskwater::network::shipped::texts(name).is_some(), "{name}");
+    }
+}

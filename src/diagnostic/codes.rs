@@ -176,6 +176,60 @@ pub const CODES: &[(&str, &str)] = &[
         "Numbers that were not seen in their source: remembered, estimated or derived.",
     ),
     ("audit-unused-source", "Sources that nothing cites."),
+    (
+        "run-syntax",
+        "A run file does not follow the TOML grammar: `key = value` lines under [section] \
+         headings.",
+    ),
+    (
+        "run-override",
+        "An option `--set` is not of the form key=value, or its key leads through \
+         something that is not a section.",
+    ),
+    (
+        "run-unknown-key",
+        "A run file has a key that the program does not know; nothing is ignored \
+         silently, because a misspelt key would otherwise leave a default in force.",
+    ),
+    ("run-missing-key", "A run file lacks a key that has no default."),
+    (
+        "run-type",
+        "A key holds the wrong kind of value, for example text where a number or a \
+         section is wanted.",
+    ),
+    (
+        "run-value",
+        "A value cannot be read, has a unit that does not fit, or contradicts another \
+         key.",
+    ),
+    ("run-range", "A value is outside the range that the program accepts."),
+    (
+        "run-unknown-species",
+        "A run file or an option names a species that its network does not have.",
+    ),
+    (
+        "run-hydrogen",
+        "The start abundances do not hold one hydrogen nucleus per hydrogen nucleus. They \
+         are relative to n_H = n(H) + 2 n(H2) + ..., so that all hydrogen in molecules is \
+         H2 = 0.5.",
+    ),
+    (
+        "run-charge",
+        "The start abundances carry a net charge. Leave `e-` out and the electrons are \
+         filled in.",
+    ),
+    (
+        "run-watch",
+        "A command that explains species was given none, neither in the run file nor as \
+         an option.",
+    ),
+    ("run-sweep", "A run file asks for a sweep where one cloud is wanted."),
+    (
+        "solve-integration",
+        "The integrator could not go on: its step became too small or it took too many. \
+         The message says when, and at which species the error was largest.",
+    ),
+    ("solve-steady", "A search for a steady state gave up before the abundances stood still."),
 ];
 
 /// The explanation of a code, or none when the code is not ours.

@@ -15,6 +15,13 @@ struct Stretch<'a> {
     far: f64,
 }
 
+/// What to do about a barrier that is not let to close a reaction when cold.
+const CLOSES: &str = "held, the barrier never closes it when cold: start the row at 5 K, or add a \
+                      cold row if tunnelling is known";
+
+/// What to do about any other stretch.
+const OTHERWISE: &str = "widen the range if the formula may be trusted, or add a row";
+
 pub(super) fn check(network: &Network, options: &AuditOptions, findings: &mut Vec<Finding>) {
     let (mut mild, mut short) = (0_usize, 0_usize);
     for reaction in &network.reactions {
@@ -26,7 +33,7 @@ pub(super) fn check(network: &Network, options: &AuditOptions, findings: &mut Ve
             continue;
         }
         short += 1;
-        let mut worst: Option<(f64, String, &Row)> = None;
+        let mut worst: Option<(f64, String, &Row, &str)> = None;
         for s in &stretches {
             let (Some(kept), Some(continued)) =
                 (of_row(network, reaction, s.row, s.edge), of_row(network, reaction, s.row, s.far))
@@ -52,13 +59,13 @@ pub(super) fn check(network: &Network, options: &AuditOptions, findings: &mut Ve
                 number_text(continued),
                 factor_text(factor)
             );
-            worst = Some((factor, message, s.row));
+            let closes = s.row.gamma > 0.0 && s.far < s.edge && continued < kept;
+            let remedy = if closes { CLOSES } else { OTHERWISE };
+            worst = Some((factor, message, s.row, remedy));
         }
         match worst {
-            Some((_, message, row)) => findings.push(
-                Finding::warning("audit-range", row.place.clone(), message)
-                    .remedy("widen the range if the formula may be trusted, or add a row"),
-            ),
+            Some((_, message, row, remedy)) => findings
+                .push(Finding::warning("audit-range", row.place.clone(), message).remedy(remedy)),
             None => mild += 1,
         }
     }

@@ -25,6 +25,12 @@ pub struct Invariants {
 /// More sums than any network has elements.
 const MOST: usize = 24;
 
+/// Part of a sum that must lie in unknowns outside the sums before it, for the
+/// sum to be restored in full. Where less does (all carbon and all oxygen in CO,
+/// say), only trace unknowns could tell two sums apart, and rounding of the sums
+/// would move them by up to 1e-16 over this part of themselves in every step.
+const OWN_PART: f64 = 1e-8;
+
 impl Invariants {
     /// From dense rows of weights over `size` unknowns.
     ///
@@ -115,10 +121,11 @@ impl Invariants {
                 }
                 matrix[a][b] = value * inverse[b];
             }
+            let least = matrix[a][a] * L::splat(OWN_PART);
             for c in 0..a {
                 matrix[a][a] = matrix[a][a] - matrix[a][c] * matrix[a][c] * matrix[c][c];
             }
-            matrix[a][a] = matrix[a][a].max(tiny);
+            matrix[a][a] = matrix[a][a].max(least).max(tiny);
             inverse[a] = L::splat(1.0) / matrix[a][a];
             for c in 0..a {
                 x[a] = x[a] - matrix[a][c] * x[c];
@@ -177,5 +184,25 @@ mod tests {
         let mut y = vec![One::splat(0.3), One::splat(0.0)];
         invariants.project(&[One::splat(0.25), One::splat(0.0)], &mut y);
         assert!((y[0].get(0) - 0.25).abs() < 1e-16 && y[1].get(0).abs() < 1e-300);
+    }
+
+    #[test]
+    fn sums_that_cannot_be_told_apart_do_no_harm() {
+        // Carbon and oxygen, all of both in CO but for traces, and a third sum
+        // that repeats the first.
+        let weights = [vec![1.0, 1.0, 0.0], vec![1.0, 0.0, 1.0], vec![1.0, 1.0, 0.0]];
+        let invariants = Invariants::new(3, &weights);
+        let start = [1.7e-4, 3e-19, 1e-19];
+        let lanes = |v: &[f64]| -> Vec<One> { v.iter().map(|&x| One::splat(x)).collect() };
+        let mut targets = invariants.sums(&lanes(&start));
+        // A unit in the last place, as rounding may leave it.
+        targets[1] = One::splat(targets[1].get(0) * (1.0 + f64::EPSILON));
+        targets[2] = One::splat(targets[2].get(0) * (1.0 - f64::EPSILON));
+        let mut y = lanes(&start);
+        invariants.project(&targets, &mut y);
+        for (got, want) in y.iter().zip(start) {
+            let error = (got.get(0) / want - 1.0).abs();
+            assert!(error < 1e-7, "{:e} against {want:e}", got.get(0));
+        }
     }
 }

@@ -81,9 +81,8 @@ impl Kinetics {
             }
             program.end_species();
         }
-        let weights: Vec<Vec<f64>> = mechanism
-            .conserved
-            .iter()
+        let weights: Vec<Vec<f64>> = independent(&mechanism.conserved)
+            .into_iter()
             .map(|row| order.iter().map(|&species| row[species]).collect())
             .collect();
         Self {
@@ -139,6 +138,33 @@ impl Kinetics {
     pub fn terms(&self) -> usize {
         self.recipes.len()
     }
+}
+
+/// The sums that do not follow from those before them, by rising number of
+/// members: an element that occurs only in a fixed ratio to others says nothing
+/// new, and a sum of many species follows from its parts with less rounding than
+/// a part from what is left of the whole.
+fn independent(sums: &[Vec<f64>]) -> Vec<&Vec<f64>> {
+    let mut by_size: Vec<&Vec<f64>> = sums.iter().collect();
+    by_size.sort_by_key(|sum| sum.iter().filter(|weight| weight.abs() > 0.0).count());
+    // Gaussian elimination on small whole numbers.
+    let mut reduced: Vec<(usize, Vec<f64>)> = Vec::new();
+    let mut kept = Vec::new();
+    for sum in by_size {
+        let mut rest = sum.clone();
+        for (pivot, row) in &reduced {
+            let factor = rest[*pivot] / row[*pivot];
+            for (rest, value) in rest.iter_mut().zip(row) {
+                *rest -= factor * value;
+            }
+        }
+        let pivot = (0..rest.len()).max_by(|&a, &b| rest[a].abs().total_cmp(&rest[b].abs()));
+        if let Some(pivot) = pivot.filter(|&pivot| rest[pivot].abs() > 1e-9) {
+            reduced.push((pivot, rest));
+            kept.push(sum);
+        }
+    }
+    kept
 }
 
 /// Per species: the reactions that change it, gathered by the (sorted) species

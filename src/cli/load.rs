@@ -30,10 +30,10 @@ pub(super) fn model(arguments: &RunArguments, output: &mut Output) -> Result<Mod
 /// The text of a run: its name in findings, its content, and the folder that
 /// relative network paths start from.
 fn run_text(run: &str) -> Result<(String, String, Option<std::path::PathBuf>), Stop> {
-    if let Some(text) = shipped_runs::text(run) {
-        if !Path::new(run).exists() {
-            return Ok((format!("runs/{run}.toml"), text.to_owned(), None));
-        }
+    if let Some(text) = shipped_runs::text(run)
+        && !Path::new(run).exists()
+    {
+        return Ok((format!("runs/{run}.toml"), text.to_owned(), None));
     }
     let path = Path::new(run);
     if !path.exists() {

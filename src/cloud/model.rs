@@ -5,6 +5,7 @@ use std::sync::Arc;
 use super::runfile::{RunFile, unknown_species};
 use super::start;
 use crate::diagnostic::Finding;
+use crate::integrate::Invariants;
 use crate::kinetics::{Kinetics, Mechanism};
 use crate::network::Network;
 
@@ -57,6 +58,17 @@ impl Model {
                     network.species.iter().map(|s| s.name.as_str()),
                 )),
             }
+        }
+        let sums = network.conserved().len();
+        if sums > Invariants::MOST {
+            findings.push(
+                Finding::error(
+                    "run-elements",
+                    run.network_place.clone(),
+                    format!("network `{}` has {sums} elements, charge included", network.name),
+                )
+                .remedy(format!("up to {} can be conserved", Invariants::MOST)),
+            );
         }
         if !findings.is_empty() {
             return Err(findings);

@@ -213,6 +213,7 @@ pub const CODES: &[(&str, &str)] = &[
          altogether. The species is left out, so that a run serves a network and its \
          subsets alike.",
     ),
+    ("run-elements", "The network has more elements than the solver can conserve one by one."),
     (
         "run-hydrogen",
         "The start abundances do not hold one hydrogen nucleus per hydrogen nucleus. They \

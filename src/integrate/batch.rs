@@ -62,11 +62,11 @@ pub fn integrate_all<L: Lane, S: System>(
             if state.solution.failure.is_none() {
                 state.solution.failure = trouble(&work, options, lane, state);
             }
-            if state.solution.failure.is_some() || state.solution.states.len() == state.times.len()
+            let done = state.solution.states.len() == state.times.len();
+            if (done || state.solution.failure.is_some())
+                && let Some(state) = slot.take()
             {
-                if let Some(state) = slot.take() {
-                    sink(state.solution);
-                }
+                sink(state.solution);
             }
         }
     }

@@ -14,16 +14,19 @@ use crate::sparse::Lane;
 /// The conserved sums of a system: `sum_i weight_i y_i` is constant.
 #[derive(Clone, Debug, Default, PartialEq)]
 pub struct Invariants {
-    rows: Vec<Vec<(usize, f64)>>,
-    /// The same weights by unknown, as (sum, weight).
-    columns: Vec<Vec<(usize, f64)>>,
-    /// Pairs of sums, each with the unknowns that enter both:
-    /// (first, second, [(unknown, product of weights)]).
-    pairs: Vec<(usize, usize, Vec<(usize, f64)>)>,
+    /// By sum, as (unknown, weight).
+    rows: Vec<Weights>,
+    /// The same by unknown, as (sum, weight).
+    columns: Vec<Weights>,
+    /// Pairs of sums with the unknowns that enter both, as (unknown, product of
+    /// weights).
+    pairs: Vec<(usize, usize, Weights)>,
 }
 
+type Weights = Vec<(usize, f64)>;
+
 /// More sums than any network has elements.
-const MOST: usize = 24;
+const MOST: usize = Invariants::MOST;
 
 /// Part of a sum that must lie in unknowns outside the sums before it, for the
 /// sum to be restored in full. Where less does (all carbon and all oxygen in CO,
@@ -32,14 +35,17 @@ const MOST: usize = 24;
 const OWN_PART: f64 = 1e-8;
 
 impl Invariants {
+    /// Sums that a system may have.
+    pub const MOST: usize = 32;
+
     /// From dense rows of weights over `size` unknowns.
     ///
     /// # Panics
-    /// If there are more than 24 rows.
+    /// If there are more than [`Invariants::MOST`] rows.
     #[must_use]
     pub fn new(size: usize, weights: &[Vec<f64>]) -> Self {
         assert!(weights.len() <= MOST, "at most {MOST} conserved sums");
-        let sparse = |row: &Vec<f64>| -> Vec<(usize, f64)> {
+        let sparse = |row: &Vec<f64>| -> Weights {
             row.iter().copied().enumerate().filter(|&(_, w)| w.abs() > 0.0).collect()
         };
         let mut pairs = Vec::new();

@@ -20,7 +20,7 @@ mod step;
 
 pub use batch::integrate_all;
 pub use failure::{Cause, Failure};
-pub use invariants::Invariants;
+pub use invariants::{Invariants, Projection};
 pub use method::Method;
 pub use spectrum::{Spectrum, slowest_mode};
 pub use steady::{SteadyFailure, SteadyOptions, SteadyState, find_steady_state};

@@ -1,5 +1,7 @@
 //! Every code that the sources use is explained once, and nothing else is.
 
+#![allow(clippy::unwrap_used, reason = "a test fails by panicking")]
+
 use std::collections::BTreeSet;
 use std::path::Path;
 

@@ -1,5 +1,7 @@
 //! Broken networks: each mistake is found where it stands, and none panics.
 
+#![allow(clippy::unwrap_used, reason = "a test fails by panicking")]
+
 use duskwater::diagnostic::Finding;
 use duskwater::network::{Network, NetworkTexts};
 use proptest::prelude::*;

@@ -1,5 +1,7 @@
 //! What a loaded network means: pieces over temperature, laws, parts, bases.
 
+#![allow(clippy::unwrap_used, reason = "a test fails by panicking")]
+
 use duskwater::network::{Extrapolate, Network, NetworkTexts, Reaction};
 use duskwater::rates::Conditions;
 

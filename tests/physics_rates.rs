@@ -1,5 +1,7 @@
 //! Rate laws against published formulas and measured coefficients.
 
+#![allow(clippy::unwrap_used, reason = "a test fails by panicking")]
+
 use duskwater::rates::grain_collision::mean_speed;
 use duskwater::rates::{Conditions, Numbers, capture, dust, thermal};
 use duskwater::species::Species;

@@ -9,6 +9,8 @@
 //! Run files count time in years: coefficients per unit of the problem's time
 //! are divided by the seconds in a year, and n_H is 1 cm-3.
 
+#![allow(clippy::unwrap_used, reason = "a test fails by panicking")]
+
 mod support;
 
 use std::sync::Arc;

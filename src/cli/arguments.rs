@@ -110,7 +110,7 @@ pub(super) struct RatesArguments {
 Examples:
   duskwater evolve dense-core
   duskwater evolve my-run.toml --format csv > abundances.csv
-  duskwater evolve dense-core --set times.per_decade=20 --set times.output=[] --figure core.svg")]
+  duskwater evolve dense-core --figure core.svg")]
 pub(super) struct EvolveArguments {
     #[command(flatten)]
     pub(super) run: RunArguments,

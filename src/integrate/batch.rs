@@ -191,7 +191,10 @@ fn on_sums<L: Lane, S: System>(
     let targets: Vec<L> = work.targets.iter().map(|t| L::splat(t.get(lane))).collect();
     crate::sparse::with_best_instructions(
         #[inline(always)]
-        || system.invariants().project(&targets, &mut y),
+        || {
+            let invariants = system.invariants();
+            invariants.project(&mut invariants.projection(), &targets, &mut y);
+        },
     );
     y.iter().map(|v| v.get(0)).collect()
 }

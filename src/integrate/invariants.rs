@@ -8,6 +8,11 @@
 //! sum (dy_i)^2 / |y_i| subject to A (y + dy) = b, that is
 //! dy = |y| A^T lambda with (A |y| A^T) lambda = b - A y. Every unknown changes
 //! by the same tiny relative amount per sum, so signs are kept.
+//!
+//! The same is done to the increments of every stage. Where an exchange is so
+//! fast that h |J| exceeds 1e16 (grains and electrons in dense lit gas), the solve
+//! knows nothing of the slow sum of the partners, and without this the error
+//! estimate would be rounding.
 
 use crate::sparse::Lane;
 
@@ -95,62 +100,118 @@ impl Invariants {
         (0..self.count()).map(|s| self.sum(s, y)).collect()
     }
 
+    /// Work space of the projection.
+    #[must_use]
+    pub fn projection<L: Lane>(&self) -> Projection<L> {
+        let m = self.count();
+        Projection {
+            weights: vec![L::zero(); self.size()],
+            matrix: vec![L::zero(); m * m],
+            inverse: vec![L::zero(); m],
+            multipliers: vec![L::zero(); m],
+        }
+    }
+
     /// Moves `y` onto `targets`.
     ///
     /// # Shape
     /// `targets`: `[count]`, `y`: `[size]`.
     #[inline(always)]
-    pub fn project<L: Lane>(&self, targets: &[L], y: &mut [L]) {
+    pub fn project<L: Lane>(&self, projection: &mut Projection<L>, targets: &[L], y: &mut [L]) {
+        self.weigh(projection, y);
+        for (sum, multiplier) in projection.multipliers.iter_mut().enumerate() {
+            *multiplier = targets[sum] - self.sum(sum, y);
+        }
+        self.correct(projection, y);
+    }
+
+    /// Takes out of an increment what would change the sums, relative to the
+    /// abundances of the last [`Invariants::weigh`].
+    ///
+    /// # Shape
+    /// `increment`: `[size]`.
+    #[inline(always)]
+    pub fn level<L: Lane>(&self, projection: &mut Projection<L>, increment: &mut [L]) {
+        for (sum, multiplier) in projection.multipliers.iter_mut().enumerate() {
+            *multiplier = -self.sum(sum, increment);
+        }
+        self.correct(projection, increment);
+    }
+
+    /// Factorizes A |y| A^T as L D L^T.
+    ///
+    /// # Shape
+    /// `y`: `[size]`.
+    #[inline(always)]
+    pub fn weigh<L: Lane>(&self, projection: &mut Projection<L>, y: &[L]) {
+        let Projection { weights, matrix, inverse, .. } = projection;
         let m = self.count();
-        let mut matrix = [[L::zero(); MOST]; MOST];
-        let mut x = [L::zero(); MOST];
+        for (weight, &y) in weights.iter_mut().zip(y) {
+            *weight = y.abs();
+        }
         // A sum without members in this cell (an element that is absent) has a
         // zero row; the tiny shift makes its multiplier zero instead of 0/0.
         let tiny = L::splat(1e-200);
         for (a, b, members) in &self.pairs {
             let mut total = if a == b { tiny } else { L::zero() };
             for &(i, w) in members {
-                total = y[i].abs().mul_add(L::splat(w), total);
+                total = weights[i].mul_add(L::splat(w), total);
             }
-            matrix[*a][*b] = total;
+            matrix[a * m + b] = total;
         }
-        for (sum, x) in x.iter_mut().enumerate().take(m) {
-            *x = targets[sum] - self.sum(sum, y);
-        }
-        // L D L^T of the symmetric matrix, then both substitutions.
-        let mut inverse = [L::zero(); MOST];
         for a in 0..m {
             for b in 0..a {
-                let mut value = matrix[a][b];
+                let mut value = matrix[a * m + b];
                 for c in 0..b {
-                    value = value - matrix[a][c] * matrix[b][c] * matrix[c][c];
+                    value = value - matrix[a * m + c] * matrix[b * m + c] * matrix[c * m + c];
                 }
-                matrix[a][b] = value * inverse[b];
+                matrix[a * m + b] = value * inverse[b];
             }
-            let least = matrix[a][a] * L::splat(OWN_PART);
+            let mut diagonal = matrix[a * m + a];
+            let least = diagonal * L::splat(OWN_PART);
             for c in 0..a {
-                matrix[a][a] = matrix[a][a] - matrix[a][c] * matrix[a][c] * matrix[c][c];
+                let left = matrix[a * m + c];
+                diagonal = diagonal - left * left * matrix[c * m + c];
             }
-            matrix[a][a] = matrix[a][a].max(least).max(tiny);
-            inverse[a] = L::splat(1.0) / matrix[a][a];
+            diagonal = diagonal.max(least).max(tiny);
+            matrix[a * m + a] = diagonal;
+            inverse[a] = L::splat(1.0) / diagonal;
+        }
+    }
+
+    /// Solves for the multipliers and adds |y| A^T times them.
+    #[inline(always)]
+    fn correct<L: Lane>(&self, projection: &mut Projection<L>, y: &mut [L]) {
+        let Projection { weights, matrix, inverse, multipliers: x } = projection;
+        let m = self.count();
+        for a in 0..m {
             for c in 0..a {
-                x[a] = x[a] - matrix[a][c] * x[c];
+                x[a] = x[a] - matrix[a * m + c] * x[c];
             }
         }
         for a in (0..m).rev() {
             x[a] = x[a] * inverse[a];
             for c in a + 1..m {
-                x[a] = x[a] - matrix[c][a] * x[c];
+                x[a] = x[a] - matrix[c * m + a] * x[c];
             }
         }
-        for (y, column) in y.iter_mut().zip(&self.columns) {
+        for ((y, weight), column) in y.iter_mut().zip(weights).zip(&self.columns) {
             let mut relative = L::zero();
             for &(sum, w) in column {
                 relative = x[sum].mul_add(L::splat(w), relative);
             }
-            *y = y.abs().mul_add(relative, *y);
+            *y = weight.mul_add(relative, *y);
         }
     }
+}
+
+/// The factorized projection of one batch; see [`Invariants::projection`].
+#[derive(Clone, Debug)]
+pub struct Projection<L> {
+    weights: Vec<L>,
+    matrix: Vec<L>,
+    inverse: Vec<L>,
+    multipliers: Vec<L>,
 }
 
 #[cfg(test)]
@@ -175,7 +236,7 @@ mod tests {
         let disturbed: Vec<f64> =
             exact.iter().enumerate().map(|(i, x)| x * (1.0 + 1e-7 * i as f64)).collect();
         let mut y = lanes(&disturbed);
-        invariants.project(&targets, &mut y);
+        invariants.project(&mut invariants.projection(), &targets, &mut y);
         for sum in 0..2 {
             let (got, want) = (invariants.sum(sum, &y).get(0), targets[sum].get(0));
             assert!((got / want - 1.0).abs() < 1e-14, "sum {sum}: {got:e} against {want:e}");
@@ -188,7 +249,8 @@ mod tests {
     fn an_absent_element_does_no_harm() {
         let invariants = Invariants::new(2, &[vec![1.0, 0.0], vec![0.0, 1.0]]);
         let mut y = vec![One::splat(0.3), One::splat(0.0)];
-        invariants.project(&[One::splat(0.25), One::splat(0.0)], &mut y);
+        let targets = [One::splat(0.25), One::splat(0.0)];
+        invariants.project(&mut invariants.projection(), &targets, &mut y);
         assert!((y[0].get(0) - 0.25).abs() < 1e-16 && y[1].get(0).abs() < 1e-300);
     }
 
@@ -205,7 +267,7 @@ mod tests {
         targets[1] = One::splat(targets[1].get(0) * (1.0 + f64::EPSILON));
         targets[2] = One::splat(targets[2].get(0) * (1.0 - f64::EPSILON));
         let mut y = lanes(&start);
-        invariants.project(&targets, &mut y);
+        invariants.project(&mut invariants.projection(), &targets, &mut y);
         for (got, want) in y.iter().zip(start) {
             let error = (got.get(0) / want - 1.0).abs();
             assert!(error < 1e-7, "{:e} against {want:e}", got.get(0));

@@ -131,7 +131,8 @@ fn lanes<L: Lane>(values: &[f64]) -> Vec<L> {
 
 fn project<L: Lane, S: System>(system: &S, targets: &[f64], y: &[f64]) -> Vec<f64> {
     let mut y = lanes::<L>(y);
-    system.invariants().project(&lanes::<L>(targets), &mut y);
+    let invariants = system.invariants();
+    invariants.project(&mut invariants.projection(), &lanes::<L>(targets), &mut y);
     y.iter().map(|v| v.get(0)).collect()
 }
 

@@ -1,5 +1,6 @@
 //! One try of a step for a batch of lanes.
 
+use super::invariants::Projection;
 use super::{Options, System};
 use crate::sparse::{Factors, Lane, with_best_instructions};
 
@@ -17,6 +18,7 @@ pub(super) struct Workspace<L> {
     pub(super) stages: Vec<L>,
     argument: Vec<L>,
     factors: Factors<L>,
+    projection: Projection<L>,
 }
 
 impl<L: Lane> Workspace<L> {
@@ -31,6 +33,7 @@ impl<L: Lane> Workspace<L> {
             stages: vec![L::zero(); options.method.stages * n],
             argument: vec![L::zero(); n],
             factors: system.symbolic().factors(),
+            projection: system.invariants().projection(),
         }
     }
 
@@ -52,8 +55,10 @@ impl<L: Lane> Workspace<L> {
         let n = system.size();
         let inverse_h = L::splat(1.0) / h;
         let shift = inverse_h * L::splat(1.0 / method.gamma);
-        let Self { parameters, y, stages, argument, factors, .. } = self;
+        let Self { parameters, y, stages, argument, factors, projection, .. } = self;
         let symbolic = system.symbolic();
+        let invariants = system.invariants();
+        invariants.weigh(projection, y);
         let first = &mut stages[..n];
         symbolic.factor(
             factors,
@@ -64,6 +69,7 @@ impl<L: Lane> Workspace<L> {
             },
         );
         symbolic.solve(factors, first);
+        invariants.level(projection, first);
         argument.copy_from_slice(y);
         for s in 1..method.stages {
             let (done, rest) = stages.split_at_mut(s * n);
@@ -82,6 +88,7 @@ impl<L: Lane> Workspace<L> {
             }
             add_combination(current, done, &weights);
             symbolic.solve(factors, current);
+            invariants.level(projection, current);
         }
     }
 
@@ -99,7 +106,7 @@ impl<L: Lane> Workspace<L> {
             let ratio = last[i] / scale;
             sum = ratio.mul_add(ratio, sum);
         }
-        system.invariants().project(&self.targets, &mut self.y_new);
+        system.invariants().project(&mut self.projection, &self.targets, &mut self.y_new);
         sum * L::splat(1.0 / n as f64)
     }
 

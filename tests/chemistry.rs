@@ -35,11 +35,6 @@ impl Steady {
     fn n(&self, name: &str) -> f64 {
         self.abundances[index(&self.network, name)] * self.n_h
     }
-
-    /// n(X)/n_H.
-    fn x(&self, name: &str) -> f64 {
-        self.abundances[index(&self.network, name)]
-    }
 }
 
 const TIMES: &str = "[times]\nuntil = 1e7\n";

@@ -8,10 +8,7 @@ use std::path::Path;
 use duskwater::diagnostic::{CODES, explain};
 
 /// First words of codes, one per area.
-const AREAS: [&str; 11] = [
-    "species", "network", "audit", "run", "solve", "sweep", "store", "match", "columns", "reduce",
-    "cli",
-];
+const AREAS: [&str; 7] = ["species", "network", "audit", "run", "solve", "input", "output"];
 
 fn sources(folder: &Path, texts: &mut Vec<String>) {
     for entry in std::fs::read_dir(folder).expect("a folder") {
@@ -51,4 +48,40 @@ fn every_code_in_the_sources_is_explained_and_every_explained_code_is_used() {
     let unused: Vec<_> = listed.difference(&used).collect();
     assert!(unused.is_empty(), "listed but not used: {unused:?}");
     assert!(explain("network-charge").is_some() && explain("nonsense").is_none());
+}
+
+/// The page as the list of codes makes it.
+fn page() -> String {
+    let mut page = String::from(
+        "# Errors\n\n\
+         ## Exit codes\n\n\
+         | code | meaning |\n|---|---|\n\
+         | 0 | done (also when the reader of the output went away) |\n\
+         | 1 | done, with findings: `check` found errors or warnings, a run stopped early, a search for a steady state failed |\n\
+         | 2 | could not run: bad input, wrong usage, or output that cannot be written |\n\
+         | 3 | a mistake in the program; please report it |\n\n\
+         Findings go to standard error, all of an input's at once, each with its code, place (file,\n\
+         line, column, counted from 1) and a remedy. `duskwater explain CODE` prints the\n\
+         paragraphs below. Codes are stable; wording is not.\n\n\
+         ## Codes\n",
+    );
+    for (code, text) in duskwater::diagnostic::CODES {
+        page.push_str(&format!("\n### `{code}`\n\n"));
+        page.push_str(&duskwater::report::text::wrap(text, 92, 0));
+        page.push('\n');
+    }
+    page
+}
+
+#[test]
+fn the_page_of_errors_lists_every_code() {
+    let path = Path::new(env!("CARGO_MANIFEST_DIR")).join("docs/errors.md");
+    if std::env::var_os("DUSKWATER_WRITE_DOCS").is_some() {
+        std::fs::write(&path, page()).unwrap();
+    }
+    let written = std::fs::read_to_string(&path).unwrap_or_default();
+    assert!(
+        written == page(),
+        "docs/errors.md is not current; DUSKWATER_WRITE_DOCS=1 cargo test --test codes writes it"
+    );
 }

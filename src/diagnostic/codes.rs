@@ -237,6 +237,25 @@ pub const CODES: &[(&str, &str)] = &[
          The message says when, and at which species the error was largest.",
     ),
     ("solve-steady", "A search for a steady state gave up before the abundances stood still."),
+    (
+        "input-missing",
+        "What the command was asked for (a run, a network, a code) is neither a file or \
+         folder nor shipped with the program. `duskwater shipped` lists what is.",
+    ),
+    ("input-read", "A file is there but could not be read; the message says what the system says."),
+    ("input-encoding", "A run file is not UTF-8 text; the place is where that shows first."),
+    (
+        "output-write",
+        "A result could not be written: no such folder, no permission, or no space. \
+         Files are written under a temporary name and renamed when whole, so that none is \
+         left half-written.",
+    ),
+    ("output-exists", "A file that would be written is there already. Nothing was written."),
+    (
+        "output-figure",
+        "Figures are .svg files, or .png files in a build with the feature `png`, which \
+         needs a font on the system.",
+    ),
 ];
 
 /// The explanation of a code, or none when the code is not ours.

@@ -1,6 +1,6 @@
 //! What machines rely on: columns, exit codes, streams.
 
-use std::collections::HashMap;
+use std::collections::{BTreeMap, HashMap};
 use std::process::Stdio;
 
 use super::program::{folder, program, rows, run, stderr, stdout, write};
@@ -59,7 +59,7 @@ fn shares_of_a_role_add_up_and_rates_rebuild_from_the_tables() {
     let arguments =
         ["channels", "dense-core", "--species", "OH,H2O", "--time", "1e5", "--format", "csv"];
     let (_, channels) = rows(&run(folder.path(), &arguments));
-    let mut sums: HashMap<(String, String), f64> = HashMap::new();
+    let mut sums: BTreeMap<(String, String), f64> = BTreeMap::new();
     for row in &channels {
         *sums.entry((row[1].clone(), row[2].clone())).or_default() +=
             row[7].parse::<f64>().unwrap();

@@ -19,10 +19,6 @@ fn compare(run: &str, overrides: &[&str], time_yr: f64, rows: &[Row]) {
     let at = |name: &str| x[index(&model.network, name)];
     for (species, over, observed, least, most, why) in rows {
         let ratio = at(species) / at(over) / observed;
-        println!(
-            "{run} at {time_yr:e} yr: {species}/{over} = {:.2e}, observed {observed:.2e}, ratio {ratio:.2}: {why}",
-            ratio * observed
-        );
         assert!(
             *least <= ratio && ratio <= *most,
             "{run} at {time_yr:e} yr: {species}/{over} is {ratio:.3} of the observed {observed:e}: {why}"

@@ -36,7 +36,7 @@ fn worst(run: &str, text: &str, relative_tolerance: f64) -> (f64, String) {
         for (species, got) in model.network.species.iter().zip(&point.abundances) {
             let expected = values[species.name.as_str()][at];
             let error = (got / expected - 1.0).abs();
-            if expected > 1e-12 && !(error <= worst.0) {
+            if expected > 1e-12 && (error > worst.0 || error.is_nan()) {
                 worst = (error, format!("{} at {} yr", species.name, point.time_yr));
             }
         }

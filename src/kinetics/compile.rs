@@ -30,7 +30,7 @@ pub struct Mechanism {
     pub conserved: Vec<Vec<f64>>,
 }
 
-/// A compiled network; see the [room's introduction](self).
+/// A compiled network; see the [room's introduction](crate::kinetics).
 #[derive(Clone, Debug)]
 pub struct Kinetics {
     pub(super) program: Program,

@@ -232,3 +232,70 @@ fn the_width_of_a_batch_and_a_cells_neighbours_change_no_bit() {
         Ok(())
     });
 }
+
+#[test]
+fn the_analytic_jacobian_is_the_derivative_on_the_shipped_networks() {
+    for run in ["dense-core", "diffuse", "post-shock"] {
+        let model = support::shipped_model(run, &[]);
+        for point in model.evolve().points {
+            // Absent species are made present, so that every derivative shows.
+            let abundances: Vec<f64> = point.abundances.iter().map(|x| x.max(1e-14)).collect();
+            let error = jacobian_error_of(&model, &abundances);
+            assert!(error <= JACOBIAN_ROUNDING, "{run} at {:e} yr: {error:e}", point.time_yr);
+        }
+    }
+}
+
+#[test]
+fn clouds_side_by_side_on_the_shipped_network_have_the_bits_of_clouds_alone() {
+    // Ten clouds of different density and temperature, so that their steps part
+    // at once and lanes fall free at different times.
+    let base = support::shipped_model("dense-core", &[]);
+    let cells: Vec<Problem> = (0..10)
+        .map(|cell| {
+            let density = format!("cloud.hydrogen_density={:e}", 10f64.powi(2 + cell % 5));
+            let temperature = format!("cloud.temperature={}", 10 + 30 * cell);
+            let model = support::shipped_model("dense-core", &[&density, &temperature]);
+            let n_h = model.run.conditions.hydrogen_density;
+            Problem {
+                parameters: base.kinetics.parameters(&model.coefficients, n_h),
+                start: base.kinetics.to_unknowns(&model.start),
+                times: vec![1e3 * YEAR_S, 1e6 * YEAR_S],
+            }
+        })
+        .collect();
+    assert!(bits_agree::<Single<Fused>, Wide<Fused>>(&base.kinetics, &cells));
+}
+
+#[test]
+fn the_order_of_the_shipped_tables_changes_nothing_beyond_rounding() {
+    // `cloud` with the lines of both tables reversed.
+    let reversed = |text: &[u8]| {
+        let text = std::str::from_utf8(text).unwrap();
+        let (head, rest) = text.split_once('\n').unwrap();
+        let rest: Vec<&str> = rest.lines().rev().collect();
+        format!("{head}\n{}\n", rest.join("\n"))
+    };
+    let texts = duskwater::network::shipped::texts("cloud").unwrap();
+    let [species, reactions] =
+        ["species.csv", "reactions.csv"].map(|file| reversed(texts.get(file).unwrap()));
+    let turned = texts.with("species.csv", species).with("reactions.csv", reactions);
+    let turned = Arc::new(Network::from_texts("cloud", &turned).unwrap().network);
+    let run = duskwater::cloud::shipped::text("diffuse").unwrap();
+    let tight = vec!["solver.relative_tolerance=1e-9".to_owned()];
+    let network = support::shipped_network("cloud");
+    let [a, b] = [&network, &turned].map(|n| support::model_with(n, run, &tight).evolve());
+    for (p, q) in a.points.iter().zip(&b.points) {
+        for (s, species) in network.species.iter().enumerate() {
+            let (x, y) = (p.abundances[s], q.abundances[support::index(&turned, &species.name)]);
+            // As for random networks: the error of the integration.
+            let allowed = 1e-6 * x.abs() + 1e-20;
+            assert!(
+                (x - y).abs() <= allowed,
+                "{} at {:e} yr: {x:e}, {y:e}",
+                species.name,
+                p.time_yr
+            );
+        }
+    }
+}

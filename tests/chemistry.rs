@@ -184,3 +184,37 @@ fn ohp_over_h2op_has_a_floor_in_molecular_gas() {
     // 1475 x 1.4e-4 = 0.2 stays above it at f = 1; fewer electrons, less.
     close("few electrons", ohp_ratio(1e-8, 1.0), 0.6337, 1e-3);
 }
+
+#[test]
+fn a_network_with_two_stable_states_shows_both() {
+    // Autocatalysis after Schloegl 1972, Z. Phys. 253, 147, closed by a sum: X is
+    // made from S by two X and lost to S again,
+    //   dx/dt = (1 - x) x^2 - 0.2 x + 0.001 (1 - x),
+    // whose roots 0.005.., 0.28.. and 0.72.. are stable, unstable and stable.
+    let rate = |x: f64| (1.0 - x) * x * x - 0.2 * x + 0.001 * (1.0 - x);
+    let root = |mut low: f64, mut high: f64| {
+        for _ in 0..200 {
+            let middle = 0.5 * (low + high);
+            if rate(middle) * rate(low) > 0.0 { low = middle } else { high = middle }
+        }
+        low
+    };
+    let network = support::network(
+        "S,Q:1\nX,Q:1\n",
+        "S + X + X -> X + X + X,thermal,1\nX -> S,thermal,0.2\nS -> X,thermal,0.001",
+    );
+    let model = support::model(&network, &support::run_text(1.0, 10.0, 0.0, "X = 1", TIMES));
+    let report = model.steady_states();
+    assert!(report.failures.is_empty());
+    assert_eq!(report.states.len(), 2);
+    let x: Vec<f64> =
+        report.states.iter().map(|state| state.abundances[index(&network, "X")]).collect();
+    close("from X", x[0], root(0.5, 1.0), 1e-9);
+    close("from S", x[1], root(0.0, 0.1), 1e-9);
+    for (state, x) in report.states.iter().zip(x) {
+        assert_eq!(state.stable, Some(true));
+        // d(rate)/dx by hand.
+        let slope: f64 = 2.0 * x - 3.0 * x * x - 0.201;
+        close("response", state.response_yr.unwrap(), -1.0 / slope / support::YEAR_S, 1e-6);
+    }
+}

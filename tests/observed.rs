@@ -6,7 +6,7 @@
 
 mod support;
 
-use support::{index, shipped_model};
+use support::{close, coefficient, index, shipped_model};
 
 /// (species, over, observed, smallest and largest model/observed, why).
 type Row = (&'static str, &'static str, f64, f64, f64, &'static str);
@@ -47,7 +47,7 @@ fn a_cold_dark_cloud_has_the_oh_of_l134n_late_and_no_ice_to_hold_its_water() {
             ("CH3OH", "H2", 3e-9, 0.0, 1e-3, "absent: methanol comes from ice"),
             // Caselli et al. 2010, A&A 521, L29: o-H2O/H2 below 1.3e-9 in B68 (seen).
             ("H2O", "H2", 1.3e-9, 50.0, 300.0, "far too high without freeze-out"),
-            // Marechal et al. 1997, A&A 324, 221: O2/CO below 0.1 in dark clouds (seen).
+            // Marechal et al. 1997, A&A 318, 252: O2/CO below 0.1 in dark clouds (seen).
             ("O2", "CO", 0.1, 0.1, 1.0, "below the limit, at the latest times only"),
         ],
     );
@@ -124,4 +124,133 @@ fn the_ionization_of_dense_gas_falls_as_the_root_of_its_density() {
     // 1.3e-5 n(H2)^-1/2 at 1e4 (so n_H 2e4), per hydrogen nucleus 6.5e-8: with
     // depleted metals there are fewer electrons.
     assert!(low > 5e-9 && low < 1.3e-7, "x_e {low:e}");
+}
+
+#[test]
+fn ohp_over_h2op_in_the_diffuse_run_follows_the_law_with_the_networks_own_coefficients() {
+    // Neufeld et al. 2010, A&A 521, L10: k(H2O+ H2)/k(OH+ H2) + k(H2O+ e-)/k(OH+
+    // H2) x_e/x(H2). In the full network light and other partners also destroy
+    // the ions and H3+ + O makes H2O+ besides: half a per cent in the atomic gas
+    // of the run; 10 per cent deeper, where hydrogen is molecular.
+    let deeper = [
+        "cloud.hydrogen_density=100",
+        "cloud.temperature=60",
+        "cloud.visual_extinction=0.5",
+        "cloud.h2_column=3e20",
+    ];
+    for (case, overrides, relative) in [("atomic", &[][..], 0.02), ("molecular", &deeper, 0.15)] {
+        let model = shipped_model("diffuse", overrides);
+        let x = model.evolve_to(&[1e8]).points.remove(0).abundances;
+        let at = |name: &str| x[index(&model.network, name)];
+        let k = |left: [&str; 2], right: &[&str]| {
+            coefficient(&model.network, &left, right, model.run.conditions.temperature)
+        };
+        let onward = k(["OH+", "H2"], &["H2O+"]);
+        let law = k(["H2O+", "H2"], &["H3O+"]) / onward
+            + k(["H2O+", "e-"], &[]) / onward * at("e-") / at("H2");
+        close(case, at("OH+") / at("H2O+"), law, relative);
+    }
+}
+
+#[test]
+fn h3p_in_the_dense_core_follows_from_all_that_takes_it() {
+    // McCall et al. 1999, ApJ 522, 338: zeta n(H2) over the sum of k n. With CO
+    // and electrons alone the law is 1.24 times the full network's value; N2, O,
+    // H2O, HCN ... take the rest of the H3+.
+    let model = shipped_model("dense-core", &[]);
+    let x = model.evolve_to(&[1e7]).points.remove(0).abundances;
+    let at = |name: &str| x[index(&model.network, name)];
+    let n_h = model.run.conditions.hydrogen_density;
+    let k = |other: &str| coefficient(&model.network, &["H3+", other], &[], 10.0);
+    let loss = k("CO") * at("CO") + k("e-") * at("e-");
+    let zeta = model.run.conditions.cosmic_ray_ionization_rate;
+    let ratio = at("H3+") * n_h * loss / (zeta * at("H2"));
+    assert!((0.6..=1.0).contains(&ratio), "{ratio}");
+}
+
+#[test]
+fn limits_hold_where_nothing_has_to_freeze_and_disagreements_keep_their_size() {
+    compare(
+        "dense-core",
+        &[],
+        1e7,
+        &[
+            // Ohishi, Irvine & Kaifu 1992 (memory): CN/H2 below 3e-9 in L134N.
+            ("CN", "H2", 3e-9, 0.0, 1.0, "below the limit"),
+            ("HCS+", "H2", 6e-11, 0.02, 0.2, "low: sulphur is in SO and SO2 so late"),
+            // Hily-Blant et al. 2010, A&A 513, A41 (seen): HNC/HCN 1.5 and CN/HCN
+            // above 1 in starless cores.
+            (
+                "HNC",
+                "HCN",
+                1.5,
+                0.2,
+                0.7,
+                "low: a fifth of HCN comes from H + H2CN, and HNC is lost to H+ and C",
+            ),
+            ("CN", "HCN", 1.0, 0.02, 0.3, "low late; 0.4 to 0.6 from 1e5 to 1e6 yr"),
+            // McKee 1989, ApJ 345, 782 (memory): 1.3e-5 n(H2)^-1/2, so 1.3e-7 at 1e4.
+            ("e-", "H2", 1.3e-7, 0.1, 0.5, "low: metals are depleted"),
+        ],
+    );
+    let deeper = [
+        "cloud.hydrogen_density=100",
+        "cloud.temperature=60",
+        "cloud.visual_extinction=0.5",
+        "cloud.h2_column=3e20",
+    ];
+    compare(
+        "diffuse",
+        &deeper,
+        1e8,
+        &[
+            // Crutcher & Watson 1976, ApJ 209, 778 (seen): NH/OH below 0.007.
+            ("NH", "OH", 0.007, 0.5, 1.1, "at the limit"),
+            // Liszt & Lucas 1996, A&A 314, 917 (memory).
+            ("OH", "HCO+", 30.0, 10.0, 50.0, "high: HCO+ is low without warm CH+"),
+            // Liszt & Gerin 2025, A&A 699, A17 (seen).
+            ("HCN", "HCO+", 1.25, 0.03, 0.2, "low: HCN as well"),
+            // Flagey et al. 2013, ApJ 762, 11 (memory).
+            ("H2O", "H2", 5e-8, 0.05, 0.3, "low by eight"),
+            // Gerin et al. 2019, A&A 622, A26 (seen).
+            ("C3H+", "H2", 7e-11, 0.0, 0.01, "absent: hydrocarbons start from CH+"),
+            // Persson et al. 2010, A&A 521, L45 (seen): NH3 and NH2 alike.
+            ("NH3", "H", 3e-9, 0.0, 1e-3, "absent: NH3+ recombines before it meets H2"),
+            // Sofia et al. 2004, ApJ 605, 272 (memory): all electrons from C, 1.4e-4;
+            // H+ from cosmic rays adds to them at zeta 3.5e-16.
+            ("e-", "C+", 1.0, 1.0, 1.5, "C+ carries most of the charge"),
+        ],
+    );
+    // The translucent rim is as dark as a dense core (2.5 mag to the surface) and
+    // ionized four times faster.
+    compare(
+        "translucent",
+        &[],
+        1e6,
+        &[
+            // Nguyen et al. 2018 (seen): up to N(H2) 1e22.
+            ("OH", "H2", 1e-7, 5.0, 30.0, "high by 14: little light, much H3O+"),
+            // Flagey et al. 2013 (memory).
+            ("H2O", "H2", 5e-8, 5.0, 40.0, "high by 18"),
+            // Liszt & Lucas 1996 (memory).
+            ("OH", "HCO+", 30.0, 0.3, 1.0, "agrees within two"),
+            // Marechal et al. 1997 (seen).
+            ("O2", "CO", 0.1, 0.0, 1.0, "below the limit"),
+            // Liszt & Lucas 2001, A&A 370, 576 (memory): 0.21 +- 0.05.
+            ("HNC", "HCN", 0.21, 0.5, 2.5, "agrees within two"),
+            // Liszt & Lucas 2002 (seen).
+            ("CH", "H2", 4.3e-8, 0.3, 3.0, "agrees"),
+        ],
+    );
+    // A magnitude nearer to the surface OH and H2O are those observed.
+    compare(
+        "translucent",
+        &["cloud.visual_extinction=1.5"],
+        1e6,
+        &[
+            ("OH", "H2", 1e-7, 0.5, 2.0, "agrees"),
+            ("H2O", "H2", 5e-8, 0.5, 2.0, "agrees"),
+            ("H2O", "OH", 0.6, 0.3, 1.0, "agrees with the far infrared"),
+        ],
+    );
 }

@@ -1,38 +1,56 @@
 //! A finding as a person reads it in a terminal, with the line it speaks of.
 
 use annotate_snippets::{AnnotationKind, Group, Level, Renderer, Snippet};
+use anstyle::{AnsiColor, Style};
 
 use crate::diagnostic::{Finding, Severity};
 
 /// Renders a finding. `texts` are the inputs read so far, by name.
 pub(super) fn render(finding: &Finding, texts: &[(String, String)], styled: bool) -> String {
+    let place = &finding.place;
+    let text = texts.iter().find(|(name, _)| *name == place.file).map(|(_, text)| text.as_str());
+    match text.and_then(|text| Some((text, span_of(text, place.line, place.column)?))) {
+        Some((text, span)) => with_line(finding, text, span, styled),
+        None => in_words(finding, styled),
+    }
+}
+
+fn with_line(finding: &Finding, text: &str, span: std::ops::Range<usize>, styled: bool) -> String {
     let level = match finding.severity {
         Severity::Error => Level::ERROR,
         Severity::Warning => Level::WARNING,
         Severity::Note => Level::NOTE,
     };
     let renderer = if styled { Renderer::styled() } else { Renderer::plain() };
-    let place = &finding.place;
-    let text = texts.iter().find(|(name, _)| *name == place.file).map(|(_, text)| text.as_str());
-    let span = text.and_then(|text| span_of(text, place.line, place.column));
-    let message = if span.is_none() && !place.file.is_empty() {
-        format!("{place}: {}", finding.message)
-    } else {
-        finding.message.clone()
-    };
-    let title = level.primary_title(message).id(finding.code);
-    let mut group = Group::with_title(title);
-    if let (Some(text), Some(span)) = (text, span) {
-        group = group.element(
-            Snippet::source(text)
-                .path(place.file.as_str())
-                .annotation(AnnotationKind::Primary.span(span)),
-        );
-    }
+    let title = level.primary_title(finding.message.as_str()).id(finding.code);
+    let snippet = Snippet::source(text)
+        .path(finding.place.file.as_str())
+        .annotation(AnnotationKind::Primary.span(span));
+    let mut group = Group::with_title(title).element(snippet);
     if !finding.remedy.is_empty() {
         group = group.element(Level::HELP.message(finding.remedy.as_str()));
     }
     renderer.render(&[group]).to_string()
+}
+
+/// A finding without a line to show.
+fn in_words(finding: &Finding, styled: bool) -> String {
+    let colour = match finding.severity {
+        Severity::Error => AnsiColor::BrightRed,
+        Severity::Warning => AnsiColor::BrightYellow,
+        Severity::Note => AnsiColor::BrightGreen,
+    };
+    let style = if styled { colour.on_default().bold() } else { Style::new() };
+    let place = finding.place.to_string();
+    let place = if place.is_empty() { place } else { format!("{place}: ") };
+    let mut out = format!(
+        "{style}{}[{}]{style:#}: {place}{}",
+        finding.severity, finding.code, finding.message
+    );
+    if !finding.remedy.is_empty() {
+        out.push_str(&format!("\n  = help: {}", finding.remedy));
+    }
+    out
 }
 
 /// The bytes of the word (or cell) at a line and column.

@@ -1,5 +1,7 @@
 //! Steady states of a cloud: all that are found from several starts.
 
+use rayon::prelude::*;
+
 use super::evolve::{Conservation, conservation};
 use super::model::Model;
 use super::start::redistributed;
@@ -43,7 +45,7 @@ pub struct SteadyReport {
 }
 
 /// Species that take up the elements in a cloud of low ionization.
-const MOLECULAR: &[&str] = &["grain-", "CO", "N2", "SiO", "SO", "O2", "H2"];
+const MOLECULAR: &[&str] = &["CO", "N2", "SiO", "SO", "O2", "H2"];
 /// Species that take up the elements in a cloud of high ionization, its
 /// hydrogen still molecular.
 const IONIZED: &[&str] = &["C+", "S+", "Si+", "Mg+", "Fe+", "Na+", "H2"];
@@ -71,10 +73,13 @@ impl Model {
             ("ions in molecular hydrogen", redistributed(&self.network, &self.start, IONIZED)),
             ("ions in atomic hydrogen", redistributed(&self.network, &self.start, ATOMIC)),
         ];
+        let searches: Vec<_> = starts
+            .into_par_iter()
+            .filter_map(|(name, start)| Some((name, self.settle(&start?))))
+            .collect();
         let mut report = SteadyReport { states: Vec::new(), failures: Vec::new() };
-        for (name, start) in starts {
-            let Some(start) = start else { continue };
-            match self.settle(&start) {
+        for (name, found) in searches {
+            match found {
                 Ok(found) => self.add(&mut report.states, name, &found),
                 Err(failure) => report.failures.push(self.describe_search(name, &failure)),
             }

@@ -54,11 +54,11 @@ fn a_tight_run_agrees_with_scipy_to_1e_4_in_every_abundance_above_1e_12() {
 }
 
 #[test]
-fn a_default_run_is_within_a_hundred_tolerances_of_scipy() {
-    // The tolerance bounds the error of a step, in the mean over species; the
-    // largest error of any species at any time is some tens of it.
+fn a_default_run_is_within_ten_tolerances_of_scipy() {
+    // The default relative tolerance is 1e-5 per step; measured, the largest error
+    // of any species above 1e-12 at any output is 2e-5.
     for (run, text) in RUNS {
         let (error, place) = worst(run, text, 1e-5);
-        assert!(error < 1e-3, "{run}: {error:e} in {place}");
+        assert!(error < 1e-4, "{run}: {error:e} in {place}");
     }
 }

@@ -70,14 +70,18 @@ fn trouble(model: &Model) -> Option<String> {
     if let Some(failure) = evolution.failure {
         return Some(failure.to_string());
     }
+    let all = || evolution.points.iter().flat_map(|point| &point.abundances).copied();
+    // First, since maxima and minima leave out what is not a number.
+    if !all().all(f64::is_finite) {
+        return Some("an abundance that is not a number".into());
+    }
     let residual = evolution.worst_residual();
-    if !(residual <= 1e-12) {
+    if residual > 1e-12 {
         return Some(format!("conserved to {residual:e}"));
     }
     // Not clipped: at most about the absolute tolerance of 1e-20 below zero.
-    let all = evolution.points.iter().flat_map(|point| &point.abundances);
-    let lowest = all.copied().fold(0.0, f64::min);
-    if !(lowest >= -1e-18) {
+    let lowest = all().fold(0.0, f64::min);
+    if lowest < -1e-18 {
         return Some(format!("an abundance of {lowest:e}"));
     }
     // Three hundred is usual; ten times as many is a cell that struggles.

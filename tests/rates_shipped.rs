@@ -18,6 +18,9 @@ struct Line {
     verdict: String,
 }
 
+/// Reactants, products, temperature (K), published share, and its range.
+type Share<'a> = (&'a [&'a str], &'a [&'a str], f64, f64, f64, f64);
+
 /// The table under "Rate coefficients of `cloud`".
 fn lines() -> Vec<Line> {
     let page = Path::new(env!("CARGO_MANIFEST_DIR")).join("docs/checks.md");
@@ -84,8 +87,7 @@ fn branching_of_recombination_and_of_h3p_with_oxygen_is_the_measured_one() {
         support::coefficient(&network, reactants, products, temperature)
             / support::coefficient(&network, reactants, &[], temperature)
     };
-    // (reactants, products, T, published, smallest, largest)
-    let cases: [(&[&str], &[&str], f64, f64, f64, f64); 4] = [
+    let cases: [Share<'_>; 4] = [
         // Jensen et al. 2000, ApJ 543, 764 (memory): OH 0.74; Neau et al. 2000 0.78.
         (&["H3O+", "e-"], &["OH"], 10.0, 0.74, 0.70, 0.80),
         // Jensen et al. 2000: H2O 0.25; Neau et al. 2000 0.18.

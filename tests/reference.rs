@@ -84,7 +84,7 @@ fn worst(run: &str, text: &str, relative_tolerance: f64) -> (f64, String) {
 fn the_error_of_every_abundance_above_1e_12_is_below_ten_tolerances() {
     // The tolerance bounds the error of a step, in the mean over species; what
     // is delivered at the end is of the same size. Seen when this was written:
-    // 5e-5 at 1e-4, 2e-5 at the default 1e-5, 1e-6 at 1e-6, 5e-7 at 1e-7. The
+    // 2e-4 at 1e-4, 2e-5 at the default 1e-5, 1e-6 at 1e-6, 5e-7 at 1e-7. The
     // stored values are good to about 1e-8.
     for (run, text) in RUNS {
         for relative_tolerance in [1e-4, 1e-5, 1e-6, 1e-7] {

@@ -1,5 +1,7 @@
 //! `channels`: what makes and destroys a species.
 
+use std::collections::BTreeSet;
+
 use super::arguments::ChannelsArguments;
 use super::exit::{Exit, Outcome, Stop};
 use super::output::Output;
@@ -8,6 +10,7 @@ use crate::analysis::channels::{Channels, integrated_rates, rank};
 use crate::cloud::Model;
 use crate::diagnostic::{Finding, Place};
 use crate::report::table::{Cell, Column, Table};
+use crate::report::text::wrap;
 use crate::units::{Dimension, parse_quantity};
 
 /// One state whose channels are wanted.
@@ -51,6 +54,10 @@ pub(super) fn run(arguments: &ChannelsArguments, output: &mut Output) -> Outcome
                 output.text(&text)?;
             }
         }
+        if output.verbose {
+            let text = citations(&model, &moments, &wanted, arguments, output);
+            output.text(&text)?;
+        }
     } else {
         output.table(&long_table(&model, &moments, &wanted, arguments.net))?;
     }
@@ -58,6 +65,34 @@ pub(super) fn run(arguments: &ChannelsArguments, output: &mut Output) -> Outcome
         figures::channels(&model, wanted[0], path, output)?;
     }
     Ok(exit)
+}
+
+/// The sources of the shown channels in full.
+fn citations(
+    model: &Model,
+    moments: &[Moment],
+    wanted: &[usize],
+    arguments: &ChannelsArguments,
+    output: &Output,
+) -> String {
+    let mut keys = BTreeSet::new();
+    for (moment, &species) in moments.iter().flat_map(|m| wanted.iter().map(move |s| (m, s))) {
+        let ranked = rank(&model.network, &moment.rates, species);
+        for channel in channel_text::ordered(&ranked, arguments.net) {
+            if channel.rank <= arguments.top {
+                let reaction = &model.network.reactions[channel.reaction];
+                keys.insert(&reaction.active_row(model.run.conditions.temperature).0.source);
+            }
+        }
+    }
+    let mut out = String::from("\nSources\n");
+    for source in keys.into_iter().filter_map(|key| model.network.source(key)) {
+        let doi =
+            if source.doi.is_empty() { String::new() } else { format!(" doi:{}", source.doi) };
+        let line = format!("{}: {}{doi}", source.key, source.citation);
+        out.push_str(&format!("{}\n", wrap(&line, output.width() - 2, 2)));
+    }
+    out
 }
 
 fn moments(

@@ -4,7 +4,7 @@ use super::dense::interpolate;
 use super::step::Workspace;
 use super::{Method, Options, Problem, Solution, System, integrate_all};
 use crate::kinetics::{Change, Kinetics, Mechanism};
-use crate::sparse::{Fused, Lane, Single, Wide};
+use crate::sparse::{Fused, Lane, Separate, Single, Wide};
 
 /// Robertson (1966), the standard stiff kinetics problem: A -> B (0.04),
 /// B + B -> B + C (3e7), B + C -> A + C (1e4).
@@ -160,5 +160,21 @@ fn eight_lanes_give_the_bits_of_one() {
     for (cell, problem) in problems.into_iter().enumerate() {
         let alone = Solution { cell, ..solve_one(&kinetics, &options, problem) };
         assert_eq!(wide[cell].as_ref(), Some(&alone), "cell {cell}");
+    }
+}
+
+#[test]
+fn rounding_products_and_sums_apart_changes_nothing_but_rounding() {
+    // What processors without a fused multiply-add compute.
+    let kinetics = robertson();
+    let options = options(Method::rodas5(), 1e-8);
+    let problem = robertson_problem(&kinetics, &[40.0, 4e4]);
+    let fused = solve_one(&kinetics, &options, problem.clone());
+    let mut apart = None;
+    integrate_all::<Wide<Separate>, _>(&kinetics, &options, [problem], |s| apart = Some(s));
+    for (a, b) in fused.states.iter().zip(&apart.expect("one solution").states) {
+        for (a, b) in a.iter().zip(b) {
+            assert!((a / b - 1.0).abs() < 1e-7, "{a:e} against {b:e}");
+        }
     }
 }

@@ -43,7 +43,7 @@ impl Evolution {
     /// The largest conservation residual.
     #[must_use]
     pub fn worst_residual(&self) -> f64 {
-        self.conservation.iter().map(|c| c.residual).fold(0.0, f64::max)
+        self.conservation.iter().map(|c| c.residual).fold(0.0, worse)
     }
 }
 
@@ -142,8 +142,13 @@ pub(super) fn conservation(
                     let size = size(x).max(size(start));
                     if size > 0.0 { change / size } else { change }
                 })
-                .fold(0.0, f64::max);
+                .fold(0.0, worse);
             Conservation { name: sum.name, residual }
         })
         .collect()
+}
+
+/// The larger of two residuals; one that is not a number is the worst.
+pub(super) fn worse(a: f64, b: f64) -> f64 {
+    if b.is_nan() || b > a { b } else { a }
 }
